@@ -40,3 +40,44 @@ export function boundsOf(geometry: FlatGeometry): Box | null {
   }
   return west <= east ? [west, south, east, north] : null;
 }
+
+/**
+ * Geometry of some features, in the order of `rows`. All rows in order give the same record back.
+ * Cost: one copy of the picked coordinates.
+ */
+export function pickFeatures(geometry: FlatGeometry, rows: Uint32Array): FlatGeometry {
+  const { kinds, partStarts, ringStarts, vertexStarts, xy } = geometry;
+  if (rows.length === kinds.length && rows.every((row, at) => row === at)) return geometry;
+  const partCount = total(rows, (row) => partStarts[row + 1] - partStarts[row]);
+  const ringOf = (row: number) => ringStarts[partStarts[row]];
+  const ringCount = total(rows, (row) => ringOf(row + 1) - ringOf(row));
+  const vertexOf = (row: number) => vertexStarts[ringOf(row)];
+  const vertexCount = total(rows, (row) => vertexOf(row + 1) - vertexOf(row));
+  const picked = {
+    kinds: new Uint8Array(rows.length),
+    partStarts: new Uint32Array(rows.length + 1),
+    ringStarts: new Uint32Array(partCount + 1),
+    vertexStarts: new Uint32Array(ringCount + 1),
+    xy: new Float64Array(2 * vertexCount),
+  };
+  let part = 0, ring = 0, vertex = 0;
+  rows.forEach((row, at) => {
+    picked.kinds[at] = kinds[row];
+    for (let p = partStarts[row]; p < partStarts[row + 1]; p++) {
+      for (let r = ringStarts[p]; r < ringStarts[p + 1]; r++) {
+        picked.xy.set(xy.subarray(2 * vertexStarts[r], 2 * vertexStarts[r + 1]), 2 * vertex);
+        vertex += vertexStarts[r + 1] - vertexStarts[r];
+        picked.vertexStarts[++ring] = vertex;
+      }
+      picked.ringStarts[++part] = ring;
+    }
+    picked.partStarts[at + 1] = part;
+  });
+  return picked;
+}
+
+function total(rows: Uint32Array, of: (row: number) => number): number {
+  let sum = 0;
+  for (const row of rows) sum += of(row);
+  return sum;
+}

@@ -45,7 +45,9 @@ const neighbors = z.object({
   minNeighbors: count,
   maxNeighbors: count,
   oneWayLinks: count.describe("Links whose reverse is missing"),
-  longestLink: figure.describe("In meters (or map units with a planar metric); null without distances"),
+  longestLink: figure.describe(
+    "In meters (or map units with a planar metric); null without distances",
+  ),
   neighborCounts: z.array(z.object({ neighbors: count, areas: count })),
 });
 export type NeighborSummary = z.infer<typeof neighbors>;
@@ -79,7 +81,9 @@ const local = z.object({
   permutations: count.describe("Draws asked for each area"),
   redrawn: count.describe("Areas drawn again with more permutations because the floor decided"),
   floor: figure.describe("Smallest p these draws can give"),
-  floorDecides: z.boolean().describe("True where even the re-draw left areas at a floor that decides"),
+  floorDecides: z.boolean().describe(
+    "True where even the re-draw left areas at a floor that decides",
+  ),
   level: z.number(),
   adjust: z.enum(["none", "bonferroni", "holm", "bh", "by"]),
   tested: count.describe("Areas that have a p"),
@@ -164,7 +168,9 @@ export const resultsSchema = z.object({
     metricCrs: z.object({
       name: z.string(),
       definition: z.string(),
-      worstDistortion: figure.describe("Largest relative error of distance over the extent; 0.01 = 1 %"),
+      worstDistortion: figure.describe(
+        "Largest relative error of distance over the extent; 0.01 = 1 %",
+      ),
       unit: z.string(),
     }).nullable(),
   }),
@@ -226,4 +232,9 @@ export interface LinkTable {
   readonly weight: Float64Array;
   /** Meters (or map units with a planar metric); null when no distances were measured. */
   readonly distance: Float64Array | null;
+}
+
+/** JSON Schema (draft 2020-12) of `results.json`, as published in `results.schema.json`. */
+export function resultsJsonSchema(): unknown {
+  return z.toJSONSchema(resultsSchema);
 }

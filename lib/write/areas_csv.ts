@@ -1,0 +1,46 @@
+/**
+ * The areas as a table without geometry, safe to open in a spreadsheet.
+ *
+ * @module
+ */
+import type { ColumnValues } from "../layer/layer.ts";
+
+/** A text that a spreadsheet could take for a formula (OWASP, "CSV injection"). */
+const FORMULA_START = /^[=+\-@\t\r]/;
+const NEEDS_QUOTES = /[",\r\n]|^\s|\s$/;
+
+/**
+ * Columns as CSV (RFC 4180; UTF-8 with byte-order mark, so that spreadsheets read the accents; comma
+ * as delimiter, point as decimal mark). Null and NaN are empty cells. A *text* that begins like a formula
+ * gets an apostrophe in front; numbers never do.
+ *
+ * @param columns Columns of equal length; booleans print as `true` and `false`.
+ */
+export function areasCsv(columns: readonly ColumnValues[]): string {
+  const count = columns[0]?.values.length ?? 0;
+  const cellOf = columns.map(cellReader);
+  const lines = [columns.map((column) => quoted(safeText(column.name))).join(",")];
+  for (let row = 0; row < count; row++) lines.push(cellOf.map((cell) => cell(row)).join(","));
+  return "\uFEFF" + lines.join("\r\n") + "\r\n";
+}
+
+function cellReader(column: ColumnValues): (row: number) => string {
+  const { values, kind } = column;
+  if (values instanceof Float64Array) {
+    const print = kind === "boolean" ? (value: number) => String(value !== 0) : String;
+    return (row) => Number.isNaN(values[row]) ? "" : print(values[row]);
+  }
+  const print = kind === "integer" || kind === "datetime" ? (text: string) => text : safeText;
+  return (row) => {
+    const text = values[row];
+    return text === null ? "" : quoted(print(text));
+  };
+}
+
+function safeText(text: string): string {
+  return FORMULA_START.test(text) ? `'${text}` : text;
+}
+
+function quoted(text: string): string {
+  return NEEDS_QUOTES.test(text) ? `"${text.replaceAll('"', '""')}"` : text;
+}
