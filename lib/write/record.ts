@@ -3,19 +3,8 @@
  *
  * @module
  */
-import { createHash } from "node:crypto";
 import process from "node:process";
-
-/** One input file. */
-export interface RecordedInput {
-  /** What it was used for: `layer`, `table` or `links`. */
-  readonly role: string;
-  /** The path as the user gave it. */
-  readonly path: string;
-  readonly bytes: number;
-  /** SHA-256 in hexadecimal. */
-  readonly sha256: string;
-}
+import type { RecordedInput } from "../read/record_input.ts";
 
 /** Content of `record.json`. Without timestamps: the same input and options give the same bytes. */
 export interface RunRecord {
@@ -38,11 +27,6 @@ export function engineName(): string {
   const { deno, bun, node } = process.versions as Record<string, string | undefined>;
   if (deno) return `Deno ${deno}`;
   return bun ? `Bun ${bun}` : `Node ${node}`;
-}
-
-/** SHA-256 of bytes in hexadecimal. Cost: one pass. */
-export function sha256(bytes: Uint8Array): string {
-  return createHash("sha256").update(bytes).digest("hex");
 }
 
 /** JSON as every file of an outcome writes it: two spaces, NaN as null, a final newline. */

@@ -3,9 +3,20 @@
  *
  * @module
  */
+import { createHash } from "node:crypto";
 import { readdir, readFile, stat } from "node:fs/promises";
 import { basename, dirname, extname, join } from "node:path";
-import { type RecordedInput, sha256 } from "../write/record.ts";
+
+/** One input file. */
+export interface RecordedInput {
+  /** What it was used for: `layer`, `table` or `links`. */
+  readonly role: string;
+  /** The path as the user gave it. */
+  readonly path: string;
+  readonly bytes: number;
+  /** SHA-256 in hexadecimal. */
+  readonly sha256: string;
+}
 
 /** Endings of formats that keep one layer in several files of one name. */
 const SETS = [
@@ -36,4 +47,8 @@ async function filesOf(path: string): Promise<string[]> {
     basename(name, extname(name)) === stem && set.includes(extname(name).toLowerCase())
   );
   return siblings.map((name) => join(dirname(path), name));
+}
+
+function sha256(bytes: Uint8Array): string {
+  return createHash("sha256").update(bytes).digest("hex");
 }
