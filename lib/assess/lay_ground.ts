@@ -1,9 +1,9 @@
 /**
- * The ground neighbors are looked for on: boundaries and points of the areas in play.
+ * The ground neighbors are looked for on: boundaries, points and given links of the areas in play.
  *
  * @module
  */
-import { UnfitDataError, UsageError } from "../layer/errors.ts";
+import { UnfitDataError } from "../layer/errors.ts";
 import { readColumn } from "../layer/column.ts";
 import { pickFeatures } from "../layer/geometry.ts";
 import type { Layer } from "../layer/layer.ts";
@@ -12,79 +12,113 @@ import { parseRule, type Rule, ruleNeeds } from "../neighbors/rule.ts";
 import { chooseMetric, type Metric } from "../project/metric.ts";
 import { representativePoints } from "../project/points.ts";
 import { resolveCrs } from "../read/crs.ts";
-import { readLinks } from "../read/links.ts";
+import { type LinkList, readLinks } from "../read/links.ts";
+import { type RecordedInput, recordInput } from "../read/record_input.ts";
 
 /** What {@link layGround} found out. */
 export interface LaidGround {
   readonly ground: Ground;
-  /** The rule of the main definition. */
-  readonly rule: Rule;
   /** How distance is measured; null where no distance can be. */
   readonly metric: Metric | null;
-  /** Representative points of all kept areas in the layer's own coordinates, 2 each. */
+  /** Representative points of the kept areas in the layer's own coordinates, 2 each. */
   readonly places: Float64Array;
-  /** Why distances are missing, where nothing needs them but the sweep would have used them. */
-  readonly withoutDistance: string | null;
+  /** Why there is no metric, where only the sweep would have used one. */
+  readonly withoutMetric: string | null;
+  /** Link files that were read. */
+  readonly inputs: readonly RecordedInput[];
 }
 
 /** What the ground is laid for. */
 export interface GroundOptions {
-  /** The main rule as text. @default `touching` for polygons, `nearest:6` for points */
-  readonly neighbors?: string | null;
+  /** All rules that will be asked for. */
+  readonly rules: readonly Rule[];
   /** How distance is measured. @default "auto" */
   readonly metric?: string;
-  /** Field of ids, for link files. @default row numbers */
-  readonly id?: string;
+  /** Names of all rows, for link files. */
+  readonly names: readonly string[];
 }
 
 /**
- * Finds points and metric for the kept rows and makes link files and block fields readable.
+ * Finds points and metric for the kept rows, and reads link files and block fields.
  *
- * @param kept Rows in play, ascending.
- * @param usable Mask over `kept`: areas that may be linked.
- * @throws {UnfitDataError} when the main rule measures distance and the layer does not allow it.
+ * @param areas Rows in play, ascending, and a mask over them: areas that may be linked.
+ * @throws {UnfitDataError} when a rule measures distance and the layer does not allow it.
  */
 export async function layGround(
   layer: Layer,
-  { kept, usable }: { kept: Uint32Array; usable: Uint8Array },
-  options: GroundOptions = {},
+  areas: { readonly kept: Uint32Array; readonly usable: Uint8Array },
+  options: GroundOptions,
 ): Promise<LaidGround> {
-  const rule = parseRule(options.neighbors ?? defaultRule(layer));
+  const { kept, usable } = areas;
+  const needs = options.rules.map(ruleNeeds);
   const geometry = pickFeatures(layer.geometry, kept);
   const places = representativePoints(geometry);
-  const needs = ruleNeeds(rule);
-  const { metric, withoutDistance } = await metricOf(layer, options, needs.points);
+  const needed = needs.some(({ points }) => points);
+  const { metric, withoutMetric } = await metricOf(layer, options.metric ?? "auto", needed);
+  const files = new Set(needs.flatMap(({ linkFiles }) => linkFiles));
+  const links = await readLinkFiles(files, kept, options.names);
+  const inputs = await Promise.all([...files].map((file) => recordInput("links", file)));
   const ground: Ground = {
     geometry,
     points: metric && metric.project(places),
     count: kept.length,
     usable,
-    links: await linksOf(needs.linkFiles, layer, kept, options.id),
-    fieldKeys: (field) => keysOf(layer, field, kept),
+    readLinks: (file) => links.get(file)!,
+    fieldKeys: (field) => {
+      const { values } = readColumn(layer, field);
+      return Array.from(kept, (row) => textOf(values[row]));
+    },
   };
-  return { ground, rule, metric, places, withoutDistance };
+  return { ground, metric, places, withoutMetric, inputs: inputs.flat() };
 }
 
-/** `touching` where most features are polygons, else `nearest:6`. */
-export function defaultRule(layer: Layer): string {
-  return layer.shape === "polygon" ? "touching" : "nearest:6";
+/** The rule when none is given: `touching` where most features are polygons, else `nearest:6`. */
+export function defaultRule(layer: Layer): Rule {
+  return parseRule(layer.shape === "polygon" ? "touching" : "nearest:6");
 }
 
-/** The names of a layer's areas: the id field as text, or row numbers. */
+/** The names of all rows: the id field as text, or row numbers. */
 export function areaNames(layer: Layer, id: string | undefined): string[] {
   if (id === undefined) return Array.from({ length: layer.count }, (_, row) => String(row));
-  return Array.from(readColumn(layer, id).values, (value) => value === null ? "" : String(value));
+  const { values } = readColumn(layer, id);
+  return Array.from({ length: layer.count }, (_, row) => textOf(values[row]) ?? "");
+}
+
+function textOf(value: string | number | null): string | null {
+  return value === null || Number.isNaN(value) ? null : String(value);
 }
 
 async function metricOf(
   layer: Layer,
-  { metric = "auto" }: GroundOptions,
+  choice: string,
   needed: boolean,
-): Promise<{ metric: Metric | null; withoutDistance: string | null }> {
+): Promise<{ metric: Metric | null; withoutMetric: string | null }> {
   try {
-    return { metric: await chooseMetric(layer, metric, { resolveCrs }), withoutDistance: null };
+    return { metric: await chooseMetric(layer, choice, { resolveCrs }), withoutMetric: null };
   } catch (error) {
-    if (needed || !(error instanceof UnfitDataError) || metric !== "auto") throw error;
-    return { metric: null, withoutDistance: error.message };
+    if (needed || choice !== "auto" || !(error instanceof UnfitDataError)) throw error;
+    return { metric: null, withoutMetric: error.message };
   }
+}
+
+/** Links between kept areas, by position among them; links of areas that a filter took out are dropped. */
+async function readLinkFiles(
+  files: ReadonlySet<string>,
+  kept: Uint32Array,
+  names: readonly string[],
+): Promise<Map<string, LinkList>> {
+  const position = new Int32Array(names.length).fill(-1);
+  kept.forEach((row, at) => position[row] = at);
+  const lists = new Map<string, LinkList>();
+  for (const file of files) {
+    const { from, to, weight } = await readLinks(file, names);
+    const inPlay = (_: number, link: number) =>
+      position[from[link]] >= 0 && position[to[link]] >= 0;
+    lists.set(file, {
+      from: from.filter(inPlay).map((row) => position[row]),
+      to: to.filter(inPlay).map((row) => position[row]),
+      weight: weight && weight.filter(inPlay),
+    });
+  }
+  return lists;
 }

@@ -13,6 +13,11 @@ import type { SourceOptions } from "./options.ts";
 
 const TABLE_ENDINGS = new Set([".csv", ".tsv", ".txt", ".xlsx"]);
 
+/** Whether a path is read as a table, by its ending. */
+export function isTable(path: string): boolean {
+  return TABLE_ENDINGS.has(extname(path).toLowerCase());
+}
+
 /**
  * Reads a layer whatever it came in. Tables (CSV, TSV, XLSX) become layers through their x/y or WKT columns; all
  * else goes through GDAL.
@@ -20,10 +25,17 @@ const TABLE_ENDINGS = new Set([".csv", ".tsv", ".txt", ".xlsx"]);
  * @param options `crs` is used only where the file itself declares none.
  * @throws {UnreadableError} naming the file.
  */
-export async function openSource(path: string, options: SourceOptions = {}): Promise<Layer> {
-  const layer = TABLE_ENDINGS.has(extname(path).toLowerCase())
-    ? await tableLayer(await readTable(path, options), options)
-    : await readLayer(path, { layer: options.layer });
-  if (layer.crs || !options.crs) return layer;
-  return { ...layer, crs: await resolveCrs(options.crs) };
+export async function openSource(
+  path: string,
+  options: SourceOptions = {},
+): Promise<{ layer: Layer; notes: readonly string[] }> {
+  if (isTable(path)) {
+    const table = await readTable(path, options);
+    return { layer: await tableLayer(table, options), notes: [] };
+  }
+  const layer = await readLayer(path, { layer: options.layer, encoding: options.encoding });
+  if (!options.crs) return { layer, notes: [] };
+  if (!layer.crs) return { layer: { ...layer, crs: await resolveCrs(options.crs) }, notes: [] };
+  const note = `--crs ${options.crs} was not used as ${layer.source} declares ${layer.crs.name}`;
+  return { layer, notes: [note] };
 }

@@ -122,7 +122,7 @@ function levelOf(level: number): number {
 }
 
 /** The word itself when it is one of `words`; a usage error that lists them otherwise. */
-export function oneOf<Word extends string>(
+export function oneOf<const Word extends string>(
   option: string,
   word: string,
   words: readonly Word[],

@@ -5,8 +5,8 @@
  */
 import { columnOf } from "./column.ts";
 import { decodeGeometry } from "./decode_geometry.ts";
+import { findFeatures } from "./fgb_features.ts";
 import { encodeFgbHeader, type FgbCrs, readFgbHeader } from "./fgb_header.ts";
-import { viewOf } from "./flat_table.ts";
 import { type FlatGeometry, GEOMETRY_KINDS } from "./geometry.ts";
 import type { Crs, Layer } from "./layer.ts";
 
@@ -32,6 +32,7 @@ export function decodeLayer(bytes: Uint8Array, source: string): Layer {
   const fgb = new Uint8Array(head.length + bytes.length - featuresAt);
   fgb.set(head);
   fgb.set(bytes.subarray(featuresAt), head.length);
+  const moved = head.length - featuresAt;
   return {
     name: header.name,
     source,
@@ -41,24 +42,9 @@ export function decodeLayer(bytes: Uint8Array, source: string): Layer {
     geometry,
     crs: crsOf(header.crs),
     fgb,
-    featureStarts: found.map((start) => start - featuresAt + head.length),
+    featureStarts: found.map((start) => start + moved),
     added: [],
   };
-}
-
-/** Offset of each feature's size prefix, and the end of the last. */
-function findFeatures(bytes: Uint8Array, featuresAt: number): Float64Array {
-  const view = viewOf(bytes);
-  const starts = [featuresAt];
-  let at = featuresAt;
-  while (at < bytes.length) {
-    at += 4 + view.getUint32(at, true);
-    starts.push(at);
-  }
-  if (at !== bytes.length) {
-    throw new RangeError(`A feature ends at byte ${at} of a file of ${bytes.length} bytes`);
-  }
-  return Float64Array.from(starts);
 }
 
 /** The one type of all features that have a geometry; 0 where there are several or none. */
@@ -78,8 +64,9 @@ function shapeOf({ kinds }: FlatGeometry): Layer["shape"] {
   return most > 0 ? GEOMETRY_KINDS[most] : "mixed";
 }
 
-/** Files without a reference system say so in words, too. */
-const NO_CRS = /^(undefined|unknown|unnamed)\b/i;
+/** Files without a reference system say so in words, too, or call it a plane of their own. */
+const NO_CRS = /^(undefined|unknown)\b/i;
+const NOT_ON_EARTH = /^(LOCAL_CS|ENGCRS|ENGINEERINGCRS)\[/i;
 const GEOGRAPHIC = /^(GEOGCS|GEOGCRS|GEODCRS|GEODETICCRS|GEOGRAPHICCRS)\[/i;
 /** What may stand around the part that tells degrees from meters. */
 const WRAPPED = /^(?:COMPD_CS|COMPOUNDCRS|BOUNDCRS)\["[^"]*",|^BOUNDCRS\[SOURCECRS\[/i;
@@ -88,7 +75,7 @@ const WRAPPED = /^(?:COMPD_CS|COMPOUNDCRS|BOUNDCRS)\["[^"]*",|^BOUNDCRS\[SOURCEC
 export function crsOf(stored: FgbCrs | null): Crs | null {
   if (stored === null || !stored.wkt) return null;
   const name = stored.name || (/^[^"]*"([^"]*)"/.exec(stored.wkt)?.[1] ?? "");
-  if (name === "" || NO_CRS.test(name)) return null;
+  if (name === "" || NO_CRS.test(name) || NOT_ON_EARTH.test(stored.wkt)) return null;
   const code = stored.codeString ?? (stored.code > 0 ? String(stored.code) : null);
   return {
     name,

@@ -81,6 +81,23 @@ export interface FgbHeader {
   readonly metadata: string | null;
 }
 
+/** A nullable column of which nothing but name and type is known. */
+export function newFgbColumn(name: string, type: number): FgbColumn {
+  return {
+    name,
+    type,
+    title: null,
+    description: null,
+    width: -1,
+    precision: -1,
+    scale: -1,
+    nullable: true,
+    unique: false,
+    primaryKey: false,
+    metadata: null,
+  };
+}
+
 /** `fgb`, major version 3, `fgb`, patch version. */
 const MAGIC = [0x66, 0x67, 0x62, 0x03, 0x66, 0x67, 0x62, 0x01] as const;
 
@@ -106,10 +123,10 @@ export function readFgbHeader(
     hasM: stored.hasM(),
     hasT: stored.hasT(),
     hasTm: stored.hasTm(),
-    columns: Array.from({ length: stored.columnsLength() }, (_, i) => readColumn(stored, i)),
+    columns: Array.from({ length: stored.columnsLength() }, (_, i) => readHeaderColumn(stored, i)),
     featuresCount: Number(stored.featuresCount()),
     indexNodeSize: stored.indexNodeSize(),
-    crs: readCrs(stored),
+    crs: readHeaderCrs(stored),
     title: stored.title(),
     description: stored.description(),
     metadata: stored.metadata(),
@@ -120,7 +137,7 @@ export function readFgbHeader(
   return { header, featuresAt: afterHeader + index };
 }
 
-function readColumn(header: Header, i: number): FgbColumn {
+function readHeaderColumn(header: Header, i: number): FgbColumn {
   const column = header.columns(i) as Column;
   return {
     name: column.name() ?? "",
@@ -137,7 +154,7 @@ function readColumn(header: Header, i: number): FgbColumn {
   };
 }
 
-function readCrs(header: Header): FgbCrs | null {
+function readHeaderCrs(header: Header): FgbCrs | null {
   const crs = header.crs();
   return crs && {
     org: crs.org(),

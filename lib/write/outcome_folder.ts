@@ -4,7 +4,7 @@
  * @module
  */
 import { randomUUID } from "node:crypto";
-import { mkdir, readdir, rename, rm, writeFile } from "node:fs/promises";
+import { access, mkdir, readdir, rename, rm, writeFile } from "node:fs/promises";
 import { basename, dirname, join, resolve } from "node:path";
 import { UnwritableError } from "../layer/errors.ts";
 
@@ -71,6 +71,33 @@ export async function writeFolder(
     throw new UnwritableError(`Cannot write ${folder}: ${reasonOf(error)}`);
   }
   await rm(old, { recursive: true, force: true });
+}
+
+/**
+ * Writes single files where the user asked for them, making their folders.
+ *
+ * @param files Path to content.
+ * @throws {UnwritableError} when one exists and `force` is off (then none is written), or the disk refuses.
+ */
+export async function writeFiles(
+  files: ReadonlyMap<string, Uint8Array | string>,
+  options: FolderOptions = {},
+): Promise<void> {
+  for (const path of options.force ? [] : files.keys()) {
+    if (await access(path).then(() => true, () => false)) {
+      throw new UnwritableError(
+        `Cannot write ${path} as it already exists; add --force to replace it or name another`,
+      );
+    }
+  }
+  for (const [path, content] of files) {
+    try {
+      await mkdir(dirname(path), { recursive: true });
+      await writeFile(path, content);
+    } catch (error) {
+      throw new UnwritableError(`Cannot write ${path}: ${reasonOf(error)}`);
+    }
+  }
 }
 
 /** Names in a folder, or null where there is none. */

@@ -11,7 +11,6 @@ export interface RunRecord {
   readonly tool: { readonly name: "nearkin"; readonly version: string };
   /** JavaScript engine, because the same engine gives the same bytes and another one floats within 1e-12. */
   readonly engine: string;
-  readonly parts: Readonly<Record<string, string>>;
   readonly inputs: readonly RecordedInput[];
   readonly seed: string;
   /** Every option as decided, defaults included. */

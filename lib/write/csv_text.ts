@@ -1,5 +1,5 @@
 /**
- * The areas as a table without geometry, safe to open in a spreadsheet.
+ * Columns as delimited text, safe to open in a spreadsheet.
  *
  * @module
  */
@@ -9,35 +9,52 @@ import type { ColumnValues } from "../layer/layer.ts";
 const FORMULA_START = /^[=+\-@\t\r]/;
 const NEEDS_QUOTES = /[",\r\n]|^\s|\s$/;
 
+/** Options of {@link csvText}. */
+export interface CsvOptions {
+  /**
+   * Put an apostrophe before a *text* that begins like a formula; numbers never get one. Off where
+   * a program reads the file back.
+   * @default true
+   */
+  readonly formulaSafe?: boolean;
+}
+
 /**
  * Columns as CSV (RFC 4180; UTF-8 with byte-order mark, so that spreadsheets read the accents; comma
- * as delimiter, point as decimal mark). Null and NaN are empty cells. A *text* that begins like a formula
- * gets an apostrophe in front; numbers never do.
+ * as delimiter, point as decimal mark). Null and NaN are empty cells; numbers are in their shortest form, which
+ * reads back bit for bit.
  *
  * @param columns Columns of equal length; booleans print as `true` and `false`.
  */
-export function areasCsv(columns: readonly ColumnValues[]): string {
+export function csvText(
+  columns: readonly ColumnValues[],
+  { formulaSafe = true }: CsvOptions = {},
+): string {
   const count = columns[0]?.values.length ?? 0;
-  const cellOf = columns.map(cellReader);
-  const lines = [columns.map((column) => quoted(safeText(column.name))).join(",")];
+  const textOf = formulaSafe ? disarmed : (text: string) => text;
+  const cellOf = columns.map((column) => cellReader(column, textOf));
+  const lines = [columns.map((column) => quoted(textOf(column.name))).join(",")];
   for (let row = 0; row < count; row++) lines.push(cellOf.map((cell) => cell(row)).join(","));
   return "\uFEFF" + lines.join("\r\n") + "\r\n";
 }
 
-function cellReader(column: ColumnValues): (row: number) => string {
+function cellReader(
+  column: ColumnValues,
+  textOf: (text: string) => string,
+): (row: number) => string {
   const { values, kind } = column;
   if (values instanceof Float64Array) {
     const print = kind === "boolean" ? (value: number) => String(value !== 0) : String;
     return (row) => Number.isNaN(values[row]) ? "" : print(values[row]);
   }
-  const print = kind === "integer" || kind === "datetime" ? (text: string) => text : safeText;
+  const print = kind === "integer" || kind === "datetime" ? (text: string) => text : textOf;
   return (row) => {
     const text = values[row];
     return text === null ? "" : quoted(print(text));
   };
 }
 
-function safeText(text: string): string {
+function disarmed(text: string): string {
   return FORMULA_START.test(text) ? `'${text}` : text;
 }
 

@@ -1,0 +1,77 @@
+/**
+ * `nearkin inspect`: what is in a file, and what would fit.
+ *
+ * @module
+ */
+import { type FieldSummary, inspect, type Inspection } from "../../lib/assess/inspect.ts";
+import { prettyJson } from "../../lib/write/record.ts";
+import type { OptionValues } from "../option_values.ts";
+import { processTerminal, type Terminal } from "../terminal.ts";
+
+/** Prints the findings as text or JSON. */
+export async function run(path: string, values: OptionValues): Promise<void> {
+  const terminal = processTerminal();
+  const found = await inspect(path, values as Record<string, string>);
+  if (values.json) return terminal.print(prettyJson(found).trimEnd());
+  for (const line of inspectionLines(found, terminal)) terminal.print(line);
+}
+
+function inspectionLines(found: Inspection, { bold }: Terminal): string[] {
+  const { geometry } = found;
+  return [
+    bold(`${found.source}: layer ${found.layer}, ${found.features} features (${found.shape})`),
+    ...otherLayers(found),
+    `CRS        ${found.crs ?? "none declared"}`,
+    `Geometry   ${geometry.empty} empty, ${geometry.invalid} invalid, ${geometry.duplicate} duplicate, ` +
+    `${geometry.multipart} multipart`,
+    ...distanceLines(found),
+    "",
+    ...fieldLines(found.fields),
+    "",
+    "Try:",
+    `  ${found.suggestion}`,
+  ];
+}
+
+function otherLayers({ layers, layer }: Inspection): string[] {
+  const others = layers.filter(({ name }) => name !== layer).map(({ name, count, geometry }) =>
+    `${name} (${count ?? "?"} ${geometry ?? "rows without geometry"})`
+  );
+  return others.length ? [`Also here  ${others.join(", ")}`] : [];
+}
+
+function distanceLines({ distances }: Inspection): string[] {
+  if (!distances) return ["Distances  none measured (no CRS, or fewer than two areas)"];
+  const { noneAlone, oneComponent, unit } = distances;
+  return [
+    `Distances  within ${lengthText(noneAlone, unit)} no area is alone; ` +
+    `within ${lengthText(oneComponent, unit)} the map hangs together`,
+  ];
+}
+
+/** Rounded up in the fourth digit, so that the printed length still reaches. */
+function lengthText(length: number, unit: string): string {
+  if (length === 0) return `0 ${unit}`;
+  const step = 10 ** (Math.floor(Math.log10(length)) - 3);
+  return `${Number((Math.ceil(length / step) * step).toPrecision(4))} ${unit}`;
+}
+
+function fieldLines(fields: readonly FieldSummary[]): string[] {
+  const width = Math.min(32, Math.max(5, ...fields.map(({ name }) => name.length)));
+  return [
+    `${"Field".padEnd(width)}  ${"Type".padEnd(10)} ${"Missing".padStart(7)}  Range`,
+    ...fields.map(({ name, storedAs, missing, distinct, smallest, largest }) => {
+      const range = smallest === null
+        ? "no value"
+        : `${shown(smallest)} to ${shown(largest!)} (${distinct} different)`;
+      return `${name.padEnd(width)}  ${storedAs.padEnd(10)} ${
+        String(missing).padStart(7)
+      }  ${range}`;
+    }),
+  ];
+}
+
+function shown(value: number | string): string {
+  const text = String(value);
+  return text.length > 24 ? `${text.slice(0, 23)}…` : text;
+}

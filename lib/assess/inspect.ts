@@ -1,0 +1,135 @@
+/**
+ * What is in a file, and what would fit it.
+ *
+ * @module
+ */
+import { extname } from "node:path";
+import { readColumn } from "../layer/column.ts";
+import { GEOMETRY_KINDS } from "../layer/geometry.ts";
+import type { Column, Layer } from "../layer/layer.ts";
+import { connectingDistances } from "../neighbors/distances.ts";
+import { type GeometryHealth, geometryHealth } from "../read/inspect_geometry.ts";
+import { type LayerInfo, listLayers } from "../read/vector.ts";
+import { definitionBuilder } from "./build_definitions.ts";
+import { layGround } from "./lay_ground.ts";
+import { isTable, openSource } from "./open_source.ts";
+import type { SourceOptions } from "./options.ts";
+
+/** A field and what its values look like. */
+export interface FieldSummary extends Column {
+  /** Rows without a value (null or empty text). */
+  readonly missing: number;
+  /** Different values. */
+  readonly distinct: number;
+  /** Smallest and largest number or text; null where there is no value. */
+  readonly smallest: number | string | null;
+  readonly largest: number | string | null;
+}
+
+/** What {@link inspect} finds. */
+export interface Inspection {
+  readonly source: string;
+  /** All layers of the file; empty for a table. */
+  readonly layers: readonly LayerInfo[];
+  readonly layer: string;
+  readonly features: number;
+  readonly shape: Layer["shape"];
+  readonly crs: string | null;
+  readonly fields: readonly FieldSummary[];
+  readonly geometry: GeometryHealth;
+  /** Null where the layer has no CRS, or fewer than two areas. */
+  readonly distances: {
+    /** Smallest distance at which every area has another within reach. */
+    readonly noneAlone: number;
+    /** Smallest distance at which all areas hang together. */
+    readonly oneComponent: number;
+    readonly unit: string;
+  } | null;
+  /** An `assess` command to paste. */
+  readonly suggestion: string;
+}
+
+/**
+ * Looks at one layer of a file.
+ *
+ * @throws What reading the layer throws. Cost: a pass over everything in the layer.
+ */
+export async function inspect(path: string, options: SourceOptions = {}): Promise<Inspection> {
+  const layers = isTable(path) ? [] : await listLayers(path);
+  const { layer } = await openSource(path, options);
+  const fields = layer.columns.map(({ name }) => summarizeField(layer, name));
+  return {
+    source: layer.source,
+    layers,
+    layer: layer.name,
+    features: layer.count,
+    shape: layer.shape,
+    crs: layer.crs && [layer.crs.name, layer.crs.code].filter(Boolean).join(" · "),
+    fields,
+    geometry: geometryHealth(layer),
+    distances: await distancesOf(layer),
+    suggestion: suggestCommand(path, layer, { fields, chosen: layers.length > 1 }),
+  };
+}
+
+function summarizeField(layer: Layer, name: string): FieldSummary {
+  const { values, ...column } = readColumn(layer, name);
+  const present: (number | string)[] = [];
+  for (const value of values) {
+    if (value !== null && value !== "" && !Number.isNaN(value)) present.push(value);
+  }
+  let [smallest = null, largest = null]: (number | string | null)[] = [present[0], present[0]];
+  for (const value of present) {
+    if (value < smallest!) smallest = value;
+    if (value > largest!) largest = value;
+  }
+  return {
+    ...column,
+    missing: layer.count - present.length,
+    distinct: new Set(present).size,
+    smallest,
+    largest,
+  };
+}
+
+async function distancesOf(layer: Layer): Promise<Inspection["distances"]> {
+  if (!layer.crs) return null;
+  const none = GEOMETRY_KINDS.indexOf("none");
+  const kept = Uint32Array.from(layer.geometry.kinds.keys())
+    .filter((row) => layer.geometry.kinds[row] !== none);
+  if (kept.length < 2) return null;
+  const usable = new Uint8Array(kept.length).fill(1);
+  const laid = await layGround(layer, { kept, usable }, { rules: [], names: [] });
+  const { points } = definitionBuilder(laid, { standardize: "row", nameOf: String });
+  if (!points || !laid.metric) return null;
+  return { ...connectingDistances(points), unit: laid.metric.unit };
+}
+
+function suggestCommand(
+  path: string,
+  layer: Layer,
+  { fields, chosen }: { readonly fields: readonly FieldSummary[]; readonly chosen: boolean },
+): string {
+  const full = (field: FieldSummary) => field.missing === 0 && field.distinct === layer.count;
+  const id = fields.find((field) => full(field) && field.kind === "text") ??
+    fields.find((field) => full(field) && field.kind === "integer");
+  const varied = (field: FieldSummary) => field !== id && field.distinct > 2;
+  const value = fields.find((field) => field.kind === "number" && varied(field)) ??
+    fields.find((field) => field.kind === "integer" && varied(field) && !full(field));
+  const parts = ["nearkin", "assess", shellWord(path)];
+  if (chosen) parts.push("--layer", shellWord(layer.name));
+  parts.push("--value", value ? shellWord(value.name) : "FIELD");
+  if (id) parts.push("--id", shellWord(id.name));
+  if (!layer.crs) parts.push("--metric", "planar");
+  return [...parts, "--out", shellWord(`${baseName(path)}-outcome`)].join(" ");
+}
+
+function baseName(path: string): string {
+  const name = path.split(/[/\\]/).at(-1)!;
+  return name.slice(0, name.length - extname(name).length) || name;
+}
+
+/** Quotes a word where a shell would not take it as it stands. */
+function shellWord(text: string): string {
+  return /^[\p{L}\p{N}_./:@%+,=-]+$/u.test(text) ? text : `'${text.replaceAll("'", "'\\''")}'`;
+}

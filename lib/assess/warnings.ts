@@ -1,0 +1,108 @@
+/**
+ * What a careful colleague would point out before anyone quotes a number.
+ *
+ * @module
+ */
+import type { Topology } from "../neighbors/topology.ts";
+import type { Metric } from "../project/metric.ts";
+import type { JoinReport } from "../read/join.ts";
+import type { NeighborSummary } from "../neighbors/describe.ts";
+import type { LocalTest } from "../inference/test_local.ts";
+
+/** Distances wrong by more than this share of themselves are pointed out. */
+const NOTABLE_DISTORTION = 0.01;
+/** With fewer areas than this, permutation tests have little to go on. */
+const FEW_AREAS = 30;
+
+/** What the warnings look at. */
+export interface WarningInput {
+  readonly notes: readonly string[];
+  readonly join: JoinReport | null;
+  readonly used: number;
+  readonly summary: NeighborSummary;
+  readonly metric: Metric | null;
+  readonly withoutMetric: string | null;
+  readonly sweep: boolean;
+  /** Links that `--where` cut; 0 without a filter. */
+  readonly cutLinks: number;
+  readonly test: LocalTest;
+}
+
+/** Warnings in the order of the path: reading, joining, neighbors, distance, tests. */
+export function warningsOf(input: WarningInput): string[] {
+  return [
+    ...input.notes,
+    ...joinWarnings(input.join),
+    ...neighborWarnings(input),
+    ...metricWarnings(input),
+    ...testWarnings(input),
+  ];
+}
+
+function joinWarnings(join: JoinReport | null): string[] {
+  if (!join) return [];
+  const warnings: string[] = [];
+  const list = (keys: readonly string[]) =>
+    keys.slice(0, 5).join(", ") + (keys.length > 5 ? ", …" : "");
+  if (join.layerOnlyCount > 0) {
+    warnings.push(
+      `${join.layerOnlyCount} areas have no row in ${join.table} (${list(join.layerOnly)})`,
+    );
+  }
+  if (join.tableOnlyCount > 0) {
+    warnings.push(
+      `${join.tableOnlyCount} rows of ${join.table} match no area (${list(join.tableOnly)})`,
+    );
+  }
+  return join.hint ? [...warnings, join.hint] : warnings;
+}
+
+function neighborWarnings({ summary, cutLinks, used }: WarningInput): string[] {
+  const warnings: string[] = [];
+  if (used < FEW_AREAS) {
+    warnings.push(`Only ${used} areas could be used; tests on so few find strong patterns only`);
+  }
+  if (summary.islands > 0) {
+    warnings.push(
+      `${summary.islands} areas have no neighbor under ${summary.rule}: they count in the mean but cannot be tested`,
+    );
+  }
+  if (cutLinks > 0) {
+    warnings.push(
+      `The filter cut ${cutLinks} neighbor pairs at its border; --value-where would keep those neighbors`,
+    );
+  }
+  return warnings;
+}
+
+function metricWarnings({ metric, withoutMetric, sweep }: WarningInput): string[] {
+  if (withoutMetric !== null && sweep) {
+    return [`No definition by distance was tried: ${withoutMetric}`];
+  }
+  const distortion = metric?.worstDistortion ?? 0;
+  if (distortion <= NOTABLE_DISTORTION) return [];
+  const percent = (100 * distortion).toPrecision(2);
+  return [`Distances in ${metric!.name} are wrong by up to ${percent} % over this extent`];
+}
+
+function testWarnings({ test }: WarningInput): string[] {
+  if (!test.floorDecides) return [];
+  return [
+    `Some areas are at the smallest p that these permutations can give (${test.floor}) and a smaller one could ` +
+    "change which areas are flagged; ask for more --local-permutations or a milder --adjust",
+  ];
+}
+
+/** Unordered pairs of a topology on all areas of which exactly one stays. */
+export function countCutPairs(
+  { offsets, indices }: Topology,
+  stays: (area: number) => boolean,
+): number {
+  let pairs = 0;
+  for (let i = 0; i + 1 < offsets.length; i++) {
+    for (let link = offsets[i]; link < offsets[i + 1]; link++) {
+      if (indices[link] > i && stays(i) !== stays(indices[link])) pairs++;
+    }
+  }
+  return pairs;
+}

@@ -1,0 +1,149 @@
+/**
+ * The files that make up a vector source: what the user named, and what belongs to it.
+ *
+ * @module
+ */
+import { unzipSync } from "fflate";
+import { readdir, readFile, stat } from "node:fs/promises";
+import { basename, dirname, extname, join } from "node:path";
+import { UnreadableError } from "../layer/errors.ts";
+import { suggestion } from "../layer/nearest_name.ts";
+import type { NamedBytes } from "./gdal_folder.ts";
+
+/** Files in memory and which of them to open. */
+export interface SourceFiles {
+  /** File name of what the user named, without folders. */
+  readonly name: string;
+  readonly files: readonly NamedBytes[];
+  /** Names of the files (or folders) to open as datasets, sorted. */
+  readonly datasets: readonly string[];
+}
+
+/** Endings that complete a file of another ending; they lie beside it under the same name. */
+const COMPANIONS: Readonly<Record<string, readonly string[]>> = {
+  ".shp": [".shx", ".dbf", ".prj", ".cpg"],
+  ".dbf": [".cpg"],
+  ".tab": [".dat", ".map", ".id", ".ind"],
+  ".mif": [".mid"],
+  ".gml": [".xsd", ".gfs"],
+  ".csv": [".csvt", ".prj"],
+  ".gpkg": [".gpkg-wal"],
+};
+
+/** Endings worth opening inside an archive. */
+const OPENED_IN_ARCHIVES: ReadonlySet<string> = new Set(
+  (".shp .tab .mif .gpkg .geojson .json .geojsonl .ndjson .fgb .kml .gml .topojson .sqlite .gdb " +
+    ".dxf .e00 .gpx .jml .gmt").split(" "),
+);
+
+/**
+ * Reads a file with its side files, the members of a zip archive, or a file geodatabase folder (`.gdb`).
+ * @throws UnreadableError where there is no such file, or it cannot be read.
+ */
+export async function readSourceFiles(path: string): Promise<SourceFiles> {
+  const name = basename(path);
+  const found = await stat(path).catch((cause) => explain(path, cause));
+  if (found.isDirectory()) return await readFolder(path, name);
+  const main = { name, bytes: await readBytes(path) };
+  if (isZip(main.bytes)) return unpack(main);
+  const companions = await findCompanions(path);
+  const files = await Promise.all(companions.map(async (companion) => ({
+    name: companion,
+    bytes: await readBytes(join(dirname(path), companion)),
+  })));
+  return { name, files: [main, ...files], datasets: [name] };
+}
+
+/** The same for bytes that are in memory already; a zip archive is unpacked. */
+export function sourceFilesOf(name: string, bytes: Uint8Array): SourceFiles {
+  const main = { name, bytes };
+  return isZip(bytes) ? unpack(main) : { name, files: [main], datasets: [name] };
+}
+
+async function readFolder(path: string, name: string): Promise<SourceFiles> {
+  const isGeodatabase = extname(name).toLowerCase() === ".gdb";
+  const inside = await readdir(path);
+  if (!isGeodatabase) {
+    const layers = inside.filter((entry) => OPENED_IN_ARCHIVES.has(extname(entry).toLowerCase()));
+    const hint = layers.length > 0 ? `name a file in it, such as ${layers.sort()[0]}` : "name a file";
+    throw new UnreadableError(`Cannot read ${path} as it is a folder; ${hint}`);
+  }
+  const files = await Promise.all(inside.map(async (entry) => ({
+    name: `${name}/${entry}`,
+    bytes: await readBytes(join(path, entry)),
+  })));
+  return { name, files, datasets: [name] };
+}
+
+async function findCompanions(path: string): Promise<string[]> {
+  const ending = extname(path);
+  const wanted = COMPANIONS[ending.toLowerCase()] ?? [];
+  if (wanted.length === 0) return [];
+  const stem = basename(path, ending).toLowerCase();
+  const names = await readdir(dirname(path));
+  return names.filter((name) => wanted.some((side) => name.toLowerCase() === stem + side)).sort();
+}
+
+async function readBytes(path: string): Promise<Uint8Array> {
+  return await readFile(path).catch((cause) => explain(path, cause));
+}
+
+async function explain(path: string, cause: NodeJS.ErrnoException): Promise<never> {
+  const name = basename(path);
+  switch (cause.code) {
+    case "ENOENT":
+    case "ENOTDIR": {
+      const beside = await readdir(dirname(path)).catch(() => []);
+      throw new UnreadableError(
+        `Cannot read ${path} as there is no such file${suggestion(name, beside)}`,
+      );
+    }
+    case "EACCES":
+    case "EPERM":
+      throw new UnreadableError(`Cannot read ${path} as reading it is not permitted`, { cause });
+    case "ERR_FS_FILE_TOO_LARGE":
+      throw new UnreadableError(
+        `Cannot read ${path} as it is larger than 2 GB; cut it into smaller files`,
+        { cause },
+      );
+    default:
+      throw new UnreadableError(`Cannot read ${path} (${cause.message})`, { cause });
+  }
+}
+
+function isZip(bytes: Uint8Array): boolean {
+  return bytes[0] === 0x50 && bytes[1] === 0x4b && bytes[2] === 0x03 && bytes[3] === 0x04;
+}
+
+/** Spreadsheets are zip archives that GDAL opens whole; so is anything without a known member. */
+function unpack(archive: NamedBytes): SourceFiles {
+  const whole = { name: archive.name, files: [archive], datasets: [archive.name] };
+  const members = unzip(archive);
+  const datasets = new Set<string>();
+  for (const name of Object.keys(members)) {
+    const geodatabase = /^(.*\.gdb)\//i.exec(name)?.[1];
+    if (geodatabase !== undefined) datasets.add(geodatabase);
+    else if (isWorthOpening(name)) datasets.add(name);
+  }
+  if (datasets.size === 0) return whole;
+  const files = Object.entries(members).map(([name, bytes]) => ({ name, bytes }));
+  return { name: archive.name, files, datasets: [...datasets].sort() };
+}
+
+function unzip({ name, bytes }: NamedBytes): Record<string, Uint8Array> {
+  try {
+    const members = unzipSync(bytes, { filter: (member) => !isClutter(member.name) });
+    return members;
+  } catch (cause) {
+    throw new UnreadableError(`Cannot unpack ${name} as the zip archive is damaged`, { cause });
+  }
+}
+
+/** Folders, and what some systems add to archives they make. */
+function isClutter(name: string): boolean {
+  return name.endsWith("/") || name.startsWith("__MACOSX/") || basename(name).startsWith("._");
+}
+
+function isWorthOpening(name: string): boolean {
+  return OPENED_IN_ARCHIVES.has(extname(name).toLowerCase());
+}
