@@ -10,6 +10,7 @@ import { planAssessment } from "../../lib/assess/plan.ts";
 import { writeAssessment } from "../../lib/assess/write_assessment.ts";
 import { checkFolder } from "../../lib/write/outcome_folder.ts";
 import { prettyJson } from "../../lib/write/record.ts";
+import { knownFormat } from "../../lib/write/vector.ts";
 import type { OptionValues } from "../option_values.ts";
 import { summaryText } from "../summary.ts";
 import { processTerminal } from "../terminal.ts";
@@ -24,12 +25,13 @@ export async function run(
   const folder = values.out as string;
   const force = values.force === true;
   const options = { ...assessOptions(values), signal, onProgress: terminal.progress };
+  const also = listOf(values.also as string | undefined).map(knownFormat);
   planAssessment(path, options);
   await checkFolder(folder, { force });
   const assessment = await assess(path, options);
   const { renamed } = await writeAssessment(assessment, folder, {
     force,
-    also: listOf(values.also as string | undefined),
+    also,
     onProgress: terminal.progress,
   });
   terminal.clear();

@@ -39,7 +39,10 @@ async function demoFiles(layer: string, table: string): Promise<Map<string, Uint
   const bytes = new TextEncoder().encode(JSON.stringify(region.geojson));
   const { fgb } = await readVectorBytes("region.geojson", bytes);
   const { files: [geopackage] } = await convertFgb(fgb, "region", "gpkg");
-  return new Map([[layer, geopackage.bytes], [table, region.table]]);
+  return new Map<string, Uint8Array | string>([
+    [layer, geopackage.bytes],
+    [table, region.table],
+  ]);
 }
 
 function commandLine(layer: string, table: string, out: string): string {

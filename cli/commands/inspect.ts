@@ -17,13 +17,11 @@ export async function run(path: string, values: OptionValues): Promise<void> {
 }
 
 function inspectionLines(found: Inspection, { bold }: Terminal): string[] {
-  const { geometry } = found;
   return [
     bold(`${found.source}: layer ${found.layer}, ${found.features} features (${found.shape})`),
     ...otherLayers(found),
     `CRS        ${found.crs ?? "none declared"}`,
-    `Geometry   ${geometry.empty} empty, ${geometry.invalid} invalid, ${geometry.duplicate} duplicate, ` +
-    `${geometry.multipart} multipart`,
+    `Geometry   ${healthText(found.geometry)}`,
     ...distanceLines(found),
     "",
     ...fieldLines(found.fields),
@@ -31,6 +29,25 @@ function inspectionLines(found: Inspection, { bold }: Terminal): string[] {
     "Try:",
     `  ${found.suggestion}`,
   ];
+}
+
+function healthText(health: Inspection["geometry"]): string {
+  const faults: [string, readonly number[]][] = [
+    ["empty", health.none],
+    ["short ring", health.shortRings],
+    ["open ring", health.openRings],
+    ["ring without area", health.flatRings],
+    ["crosses itself", health.selfCrossing],
+    ["duplicate", health.duplicates],
+    ["multipart", health.multipart],
+  ];
+  const found = faults.filter(([, rows]) => rows.length > 0);
+  if (found.length === 0) return "nothing odd: none empty, invalid, duplicate or multipart";
+  return found.map(([name, rows]) => `${rows.length} ${name} (row ${rowList(rows)})`).join(", ");
+}
+
+function rowList(rows: readonly number[]): string {
+  return rows.slice(0, 3).join(", ") + (rows.length > 3 ? ", …" : "");
 }
 
 function otherLayers({ layers, layer }: Inspection): string[] {

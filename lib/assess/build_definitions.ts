@@ -66,6 +66,5 @@ function usablePoints(points: Float64Array, usable: Uint8Array): Float64Array {
 /** Distance of each area to its N-th nearest, for a `kN` bandwidth; undefined for all others. */
 function adaptiveBandwidths(points: Float64Array, rule: WeightRule): Float64Array | undefined {
   if (!("bandwidth" in rule) || rule.bandwidth.kind !== "adaptive") return undefined;
-  const { nearest } = rule.bandwidth;
-  return kNearestDistances(points, nearest).filter((_, at) => at % nearest === nearest - 1);
+  return kNearestDistances(points, rule.bandwidth.nearest);
 }

@@ -52,7 +52,8 @@ export async function layGround(
   const { kept, usable } = areas;
   const needs = options.rules.map(ruleNeeds);
   const geometry = pickFeatures(layer.geometry, kept);
-  const places = representativePoints(geometry);
+  const geographic = layer.crs?.geographic ?? false;
+  const places = representativePoints(geometry, { geographic });
   const needed = needs.some(({ points }) => points);
   const { metric, withoutMetric } = await metricOf(layer, options.metric ?? "auto", needed);
   const files = new Set(needs.flatMap(({ linkFiles }) => linkFiles));
@@ -63,6 +64,7 @@ export async function layGround(
     points: metric && metric.project(places),
     count: kept.length,
     usable,
+    geographic,
     readLinks: (file) => links.get(file)!,
     fieldKeys: (field) => {
       const { values } = readColumn(layer, field);

@@ -6,7 +6,8 @@
 import { readColumn, readColumns } from "../layer/column.ts";
 import { UnfitDataError } from "../layer/errors.ts";
 import type { Layer } from "../layer/layer.ts";
-import { compileFilter, filterFields } from "../prepare/filter.ts";
+import { compileFilter } from "../prepare/filter.ts";
+import { filterFields } from "../prepare/filter_syntax.ts";
 import { type MissingCount, numbersOf } from "../prepare/numbers.ts";
 import { type UsableAreas, usableAreas } from "../prepare/usable.ts";
 import type { JoinReport } from "../read/join.ts";

@@ -58,18 +58,18 @@ export async function writeAssessment(
     ...fields.renamed.map((names) => ({ file: "areas.fgb", ...names })),
     ...layers.renamed,
   ];
-  const files = new Map<string, Uint8Array | string>([
+  const files: [string, Uint8Array | string][] = [
     ...layers.files,
     ["areas.csv", csvText([...originalColumns(assessment), ...added])],
     ["links.fgb", linksLayer(assessment)],
     ["results.json", prettyJson(results)],
     ["report.html", reportPage(input)],
     ["style.sld", styleSld(areas)],
-    ...[...plotFigures(input)].map(([name, svg]) => [`plots/${name}.svg`, svg] as const),
+    ...plotFiles(input),
     ["record.json", prettyJson(recordOf(assessment, renamed))],
-  ]);
+  ];
   options.signal?.throwIfAborted();
-  await writeFolder(folder, files, options);
+  await writeFolder(folder, new Map(files), options);
   return { renamed };
 }
 
@@ -88,6 +88,10 @@ async function areaLayers(
   return { files, renamed };
 }
 
+function plotFiles(input: ReportInput): [string, string][] {
+  return Array.from(plotFigures(input), ([name, svg]) => [`plots/${name}.svg`, svg]);
+}
+
 function originalColumns({ layer }: Assessment): ColumnValues[] {
   return layer.columns.map(({ name }) => readColumn(layer, name));
 }
@@ -97,16 +101,17 @@ function linksLayer({ layer, links, places, names, plan }: Assessment): Uint8Arr
     crs: layer.crs,
     points: places,
     links,
-    ids: plan.source.id === undefined ? null : names,
+    ids: plan.source.id === undefined ? undefined : names,
   });
 }
 
-function reportInput({ results, areas, layer, names, plan }: Assessment): ReportInput {
+function reportInput({ results, areas, layer, links, names, plan }: Assessment): ReportInput {
   return {
     results,
     areas,
     geometry: layer.geometry,
-    geographic: layer.crs?.geographic ?? false,
+    crs: layer.crs,
+    s0: links.weight.reduce((sum, weight) => sum + weight, 0),
     labels: plan.source.id === undefined ? null : names,
     cautions: CAUTIONS,
   };

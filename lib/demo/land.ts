@@ -36,6 +36,9 @@ const ISLANDS: readonly { readonly cells: number; readonly areas: number }[] = [
   { cells: 3, areas: 0 },
 ];
 
+/** A lake in open country, as shares of the frame's sides. */
+const LAKE = { u: 0.8, v: 0.46, radius: 0.018 } as const;
+
 /** Number of areas that lie on islands. */
 export const ISLAND_AREAS: number = ISLANDS.reduce((sum, island) => sum + island.areas, 0);
 
@@ -65,13 +68,16 @@ function raisedGround(
   random: Random,
   { width, height }: { readonly width: number; readonly height: number },
 ): Uint8Array {
-  const noise = noiseField(random, 5, 4);
+  const noise = noiseField(random, 6, 4);
+  const inFrame = stepsFrom(mesh, mesh.open);
   const raised = new Uint8Array(mesh.count);
   for (let cell = 0; cell < mesh.count; cell++) {
     const u = mesh.points[2 * cell] / width, v = mesh.points[2 * cell + 1] / height;
     const across = (u - 0.58) / 0.34, up = (v - 0.5) / 0.42;
     const block = 1 - across * across * across * across - up * up * up * up;
-    raised[cell] = block + 1.1 * noise(u, v) > 0.25 && block > -0.6 ? 1 : 0;
+    const inLake = (u - LAKE.u) ** 2 + (v - LAKE.v) ** 2 < LAKE.radius ** 2;
+    const mayRise = inFrame[cell] >= 2 && block > -0.9 && !inLake;
+    raised[cell] = mayRise && block + 1.9 * noise(u, v) > 0 ? 1 : 0;
   }
   return raised;
 }
@@ -117,30 +123,31 @@ function raiseIsland(
     if (off >= 2 && off <= 6 && inFrame[cell] > radius + 1) sites.push(cell);
   }
   const start = sites[pick(random, sites.length)];
-  const mayGrow = (cell: number) => offshore[cell] >= 2 && inFrame[cell] >= 2;
-  return growIsland(mesh, start, size, mayGrow);
+  const reach = Float64Array.from({ length: mesh.count }, (_, cell) => {
+    if (offshore[cell] < 2 || inFrame[cell] < 2) return Infinity;
+    return distance2(mesh, cell, start) * (0.7 + 0.6 * random());
+  });
+  return growIsland(mesh, start, size, reach);
 }
 
-/** The `size` connected cells nearest to `start` among those that may be used. */
+/** The `size` connected cells around `start` that are reached first; those at Infinity never are. */
 function growIsland(
   mesh: CellMesh,
   start: number,
   size: number,
-  mayGrow: (cell: number) => boolean,
+  reach: Float64Array,
 ): number[] {
   const island: number[] = [];
   const seen = new Set([start]);
   const shore = [start];
   while (island.length < size && shore.length > 0) {
     let nearest = 0;
-    for (let i = 1; i < shore.length; i++) {
-      if (distance2(mesh, shore[i], start) < distance2(mesh, shore[nearest], start)) nearest = i;
-    }
+    for (let i = 1; i < shore.length; i++) if (reach[shore[i]] < reach[shore[nearest]]) nearest = i;
     const [cell] = shore.splice(nearest, 1);
     island.push(cell);
     for (let s = mesh.offsets[cell]; s < mesh.offsets[cell + 1]; s++) {
       const next = mesh.neighbors[s];
-      if (!seen.has(next) && mayGrow(next)) seen.add(next), shore.push(next);
+      if (!seen.has(next) && reach[next] < Infinity) seen.add(next), shore.push(next);
     }
   }
   return island;

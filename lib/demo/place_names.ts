@@ -5,8 +5,21 @@
  */
 import { pick, type Random } from "./chance.ts";
 
-const STARTS = ["Zv", "Yth", "Qu", "Øv", "Xel", "Vrä", "Ghu", "Ksi", "Żor", "Oth", "Éru", "Ulm"];
-const MIDDLES = ["ako", "ëri", "uza", "ôvi", "iðe", "aña", "ošu", "ely", "åro", "ipha", "ūgo", "ezi"];
+const STARTS = ["Zv", "Yth", "Qu", "Øv", "Xel", "Vrä", "Ghu", "Ksi", "Żor", "Oth", "Éru", "Ulw"];
+const MIDDLES = [
+  "ako",
+  "ëri",
+  "uza",
+  "ôvi",
+  "iðe",
+  "aña",
+  "ošu",
+  "ely",
+  "åro",
+  "ipha",
+  "ūgo",
+  "ezi",
+];
 const ENDS = ["thok", "vrim", "qes", "zund", "ghar", "ksal", "phøt", "lixt", "drož", "wenz"];
 const KINDS = ["", "", "", "", " Sound", " Fell", " Havn", " Quay", "-under-Vreck", " & Mórz"];
 

@@ -62,7 +62,8 @@ export interface ColumnNumbers {
  * @throws {UsageError} when decimal and thousands mark are the same.
  */
 export function numbersOf(column: ColumnValues, options: NumberOptions = {}): ColumnNumbers {
-  if (options.decimal !== undefined && options.decimal === options.thousands) {
+  const { decimal = "auto" } = options;
+  if (decimal !== "auto" && decimal === options.thousands) {
     throw new UsageError(
       `Cannot use ${options.decimal} as both decimal and thousands mark; change --decimal or --thousands`,
     );
