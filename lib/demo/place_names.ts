@@ -21,7 +21,7 @@ const MIDDLES = [
   "ezi",
 ];
 const ENDS = ["thok", "vrim", "qes", "zund", "ghar", "ksal", "phøt", "lixt", "drož", "wenz"];
-const KINDS = ["", "", "", "", " Sound", " Fell", " Havn", " Quay", "-under-Vreck", " & Mórz"];
+const KINDS = ["", "", "", "", "", "", "", " Sound", " Fell", " & Havn", "-under-Vreck"];
 
 /**
  * `count` different names, pronounceable and partly with letters beyond ASCII, in random order. The syllables are

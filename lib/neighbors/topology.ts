@@ -16,3 +16,14 @@ export interface Topology {
   /** Weights that came with the links (`links:FILE` with a weight column), parallel to `indices`. */
   readonly given?: Float64Array;
 }
+
+/** Whether area `from` has the neighbor `to`. Cost: a binary search in its row. */
+export function isLinked({ offsets, indices }: Topology, from: number, to: number): boolean {
+  let low = offsets[from], high = offsets[from + 1];
+  while (low < high) {
+    const middle = (low + high) >> 1;
+    if (indices[middle] < to) low = middle + 1;
+    else high = middle;
+  }
+  return low < offsets[from + 1] && indices[low] === to;
+}

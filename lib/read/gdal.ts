@@ -203,6 +203,8 @@ async function startGdal(): Promise<Gdal> {
       ENV.PROJ_LIB = "/usr/share/proj";
       ENV.GDAL_DATA = "/usr/share/gdal";
       ENV.GDAL_NUM_THREADS = "0";
+      // Conversion by Arrow batches is no faster here and fails on null geometry of mixed types.
+      ENV.OGR2OGR_USE_ARROW_API = "NO";
     }],
   });
   const gdal = new Gdal(module, messages);

@@ -72,7 +72,9 @@ export class GdalFolder implements Disposable {
     const root = this.#inside(name);
     const walk = (below: string): NamedBytes[] => {
       const path = `${root}${below}`;
-      if (!FS.isDir(FS.stat(path).mode)) return [{ name: below.slice(1), bytes: FS.readFile(path) }];
+      if (!FS.isDir(FS.stat(path).mode)) {
+        return [{ name: below.slice(1), bytes: FS.readFile(path) }];
+      }
       return entries(FS.readdir(path)).flatMap((entry) => walk(`${below}/${entry}`));
     };
     return walk("");
@@ -124,7 +126,9 @@ export class GdalFolder implements Disposable {
       return made;
     });
     const messages = gdal.takeMessages();
-    if (written === 0 || messages.some(isError)) throw this.#error(`Cannot write ${target}`, messages);
+    if (written === 0 || messages.some(isError)) {
+      throw this.#error(`Cannot write ${target}`, messages);
+    }
     return messages.map((line) => this.#withoutPaths(line));
   }
 

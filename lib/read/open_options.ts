@@ -30,9 +30,6 @@ export function openOptionsFor(
     case ".shp":
     case ".dbf":
       return [...encodingOption(encoding ?? guessEncoding(name, files)), ...openOptions];
-    case ".tab":
-    case ".mif":
-      return [...encodingOption(encoding), ...openOptions];
     default:
       return [...openOptions];
   }
@@ -45,7 +42,8 @@ function encodingOption(encoding: string | undefined): string[] {
 /** GDAL takes an unmarked table for Latin-1, but much software writes UTF-8 without the mark. */
 function guessEncoding(name: string, files: readonly NamedBytes[]): string | undefined {
   const stem = name.slice(0, -extname(name).length).toLowerCase();
-  const beside = (ending: string) => files.find((file) => file.name.toLowerCase() === stem + ending);
+  const beside = (ending: string) =>
+    files.find((file) => file.name.toLowerCase() === stem + ending);
   const table = beside(".dbf")?.bytes;
   if (table === undefined || beside(".cpg") !== undefined) return undefined;
   return isUtf8BeyondAscii(table.subarray(headerLength(table))) ? "UTF-8" : undefined;

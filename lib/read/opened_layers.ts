@@ -108,7 +108,9 @@ export function chooseLayer(
     const found = layers.find((layer) => layer.name === wanted);
     if (found !== undefined) return found;
     throw new UsageError(
-      `No layer "${wanted}" in ${source}, which has ${names.join(", ")}${suggestion(wanted, names)}`,
+      `No layer "${wanted}" in ${source}, which has ${names.join(", ")}${
+        suggestion(wanted, names)
+      }`,
     );
   }
   if (layers.length === 1) return layers[0];

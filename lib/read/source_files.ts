@@ -9,6 +9,7 @@ import { basename, dirname, extname, join } from "node:path";
 import { UnreadableError } from "../layer/errors.ts";
 import { suggestion } from "../layer/nearest_name.ts";
 import type { NamedBytes } from "./gdal_folder.ts";
+import { kmlToGeoJson } from "./kml.ts";
 
 /** Files in memory and which of them to open. */
 export interface SourceFiles {
@@ -51,13 +52,13 @@ export async function readSourceFiles(path: string): Promise<SourceFiles> {
     name: companion,
     bytes: await readBytes(join(dirname(path), companion)),
   })));
-  return { name, files: [main, ...files], datasets: [name] };
+  return withoutKml({ name, files: [main, ...files], datasets: [name] });
 }
 
 /** The same for bytes that are in memory already; a zip archive is unpacked. */
 export function sourceFilesOf(name: string, bytes: Uint8Array): SourceFiles {
   const main = { name, bytes };
-  return isZip(bytes) ? unpack(main) : { name, files: [main], datasets: [name] };
+  return isZip(bytes) ? unpack(main) : withoutKml({ name, files: [main], datasets: [name] });
 }
 
 async function readFolder(path: string, name: string): Promise<SourceFiles> {
@@ -65,7 +66,9 @@ async function readFolder(path: string, name: string): Promise<SourceFiles> {
   const inside = await readdir(path);
   if (!isGeodatabase) {
     const layers = inside.filter((entry) => OPENED_IN_ARCHIVES.has(extname(entry).toLowerCase()));
-    const hint = layers.length > 0 ? `name a file in it, such as ${layers.sort()[0]}` : "name a file";
+    const hint = layers.length > 0
+      ? `name a file in it, such as ${layers.sort()[0]}`
+      : "name a file";
     throw new UnreadableError(`Cannot read ${path} as it is a folder; ${hint}`);
   }
   const files = await Promise.all(inside.map(async (entry) => ({
@@ -127,13 +130,30 @@ function unpack(archive: NamedBytes): SourceFiles {
   }
   if (datasets.size === 0) return whole;
   const files = Object.entries(members).map(([name, bytes]) => ({ name, bytes }));
-  return { name: archive.name, files, datasets: [...datasets].sort() };
+  return withoutKml({ name: archive.name, files, datasets: [...datasets].sort() });
+}
+
+/** Replaces KML files by GeoJSON of the same content; those without a placemark only point to others. */
+function withoutKml(source: SourceFiles): SourceFiles {
+  const isKml = (name: string) => extname(name).toLowerCase() === ".kml";
+  const converted = new Map(
+    source.files.filter(({ name }) => isKml(name))
+      .map(({ name, bytes }) => [name, kmlToGeoJson(basename(name), bytes)]),
+  );
+  if (converted.size === 0) return source;
+  const renamed = (name: string) => converted.has(name) ? `${name}.geojson` : name;
+  const files = source.files.map(({ name, bytes }) => {
+    const geoJson = converted.get(name);
+    return { name: renamed(name), bytes: geoJson ? new TextEncoder().encode(geoJson.text) : bytes };
+  });
+  const filled = source.datasets.filter((name) => converted.get(name)?.count !== 0);
+  const datasets = (filled.length > 0 ? filled : source.datasets).map(renamed);
+  return { ...source, files, datasets };
 }
 
 function unzip({ name, bytes }: NamedBytes): Record<string, Uint8Array> {
   try {
-    const members = unzipSync(bytes, { filter: (member) => !isClutter(member.name) });
-    return members;
+    return unzipSync(bytes, { filter: (member) => !isClutter(member.name) });
   } catch (cause) {
     throw new UnreadableError(`Cannot unpack ${name} as the zip archive is damaged`, { cause });
   }

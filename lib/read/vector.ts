@@ -20,7 +20,7 @@ import { cleanedLayerToFgb, layerToFgb, mayHideEmptyPoint } from "./to_fgb.ts";
 export interface ReadLayerOptions {
   /** Which layer, where the file holds several. @default the only one with geometry */
   readonly layer?: string;
-  /** Text encoding of a Shapefile or MapInfo table whose own mark is missing or wrong. @default the file's */
+  /** Text encoding of a Shapefile whose own mark is missing or wrong. @default the file's */
   readonly encoding?: string;
   /** Further GDAL open options of the format, `KEY=VALUE`. @default none */
   readonly openOptions?: readonly string[];
@@ -72,10 +72,12 @@ export async function listLayers(path: string): Promise<LayerInfo[]> {
 
 async function readSource(source: SourceFiles, options: ReadLayerOptions): Promise<Layer> {
   const layer = decodeFgbFile(source, options.layer) ?? await readThroughGdal(source, options);
-  if (layer.count === 0) {
-    throw new UnfitDataError(`Layer "${layer.name}" of ${source.name} has no features`);
-  }
+  if (layer.count === 0) throw withoutFeatures(layer.name, source);
   return layer;
+}
+
+function withoutFeatures(layer: string, source: SourceFiles): UnfitDataError {
+  return new UnfitDataError(`Layer "${layer}" of ${source.name} has no features`);
 }
 
 /** The plain conversion first; it fails only on rare geometries, which cost a detour to clean away. */
@@ -98,7 +100,10 @@ async function convert(
   const layers = openLayers(folder, source, options, ["-nocount", "-noextent", "-nomd"]);
   const chosen = chooseLayer(layers, options.layer, source.name);
   try {
-    return decodeLayer(toFgb(folder, chosen), source.name);
+    const fgb = toFgb(folder, chosen);
+    // GDAL writes not even a header for a layer without features.
+    if (fgb.length === 0) throw withoutFeatures(chosen.name, source);
+    return decodeLayer(fgb, source.name);
   } catch (cause) {
     if (!(cause instanceof GdalError)) throw cause;
     throw new UnreadableError(

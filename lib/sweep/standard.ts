@@ -4,7 +4,7 @@
  * @module
  */
 import { distance } from "../neighbors/gabriel.ts";
-import { nearestTable } from "../neighbors/nearest.ts";
+import { nearestTable } from "../neighbors/nearest_table.ts";
 import { indexPoints } from "../neighbors/point_index.ts";
 import { roundPoints } from "../neighbors/rounded_points.ts";
 import { parseRule, type Rule } from "../neighbors/rule.ts";

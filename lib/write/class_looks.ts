@@ -22,7 +22,7 @@ export const CLASS_LOOKS: Readonly<Record<AreaClass, ClassLook>> = {
   "low among low": { fill: "#0F6E6E", hatch: "none", ink: "#0F6E6E" },
   "high among low": { fill: "#E3B7D0", hatch: "rising", ink: "#7A1F5C" },
   "low among high": { fill: "#A9D5D1", hatch: "falling", ink: "#0F6E6E" },
-  "no evidence": { fill: "#E9E6E0", hatch: "none", ink: "#A39C8F" },
+  "no evidence": { fill: "#E9E6E0", hatch: "none", ink: "#857D70" },
   "alone": { fill: "#FFFFFF", hatch: "dots", ink: "#6E685E" },
   "no value": { fill: "#FFFFFF", hatch: "cross", ink: "#A39C8F" },
 };

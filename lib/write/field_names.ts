@@ -8,8 +8,11 @@
 export interface NameRule {
   /** Longest name in UTF-8 bytes. @default no limit */
   readonly bytes?: number;
-  /** Whether only unaccented letters, digits and `_` are allowed, digits not first. @default false */
-  readonly plain?: boolean;
+  /**
+   * Set where a name is letters, digits and `_`, digits not first: letters of any script, or of ASCII.
+   * @default any characters
+   */
+  readonly letters?: "any" | "ascii";
 }
 
 /** A field whose name had to change. */
@@ -29,16 +32,22 @@ const ENDING = /_[A-Za-z]{1,6}$/;
  * that differ only in letter case count as the same. The result depends on nothing but the arguments.
  */
 export function fitNames(names: readonly string[], rule: NameRule): string[] {
-  const fits = names.map((name) => isAllowed(name, rule));
   const taken = new Set<string>();
-  const fitted = names.map((name, i) => {
-    if (!fits[i] || taken.has(name.toLowerCase())) return null;
+  const fitted = names.map((name) => {
+    if (!isAllowed(name, rule) || taken.has(name.toLowerCase())) return null;
     taken.add(name.toLowerCase());
     return name;
   });
+  const numbers = new Map<string, number>();
   return fitted.map((kept, i) => {
     if (kept !== null) return kept;
-    const name = unused(shorten(rule.plain ? plain(names[i]) : names[i], rule), taken, rule);
+    const wanted = shorten(onlyLetters(names[i], rule), rule);
+    let name = wanted;
+    while (taken.has(name.toLowerCase())) {
+      const number = (numbers.get(wanted) ?? 1) + 1;
+      numbers.set(wanted, number);
+      name = numbered(wanted, number, rule);
+    }
     taken.add(name.toLowerCase());
     return name;
   });
@@ -49,16 +58,18 @@ export function renamedFields(names: readonly string[], fitted: readonly string[
   return names.flatMap((from, i) => from === fitted[i] ? [] : [{ from, to: fitted[i] }]);
 }
 
-function isAllowed(
-  name: string,
-  { bytes = Infinity, plain: onlyPlain = false }: NameRule,
-): boolean {
-  return byteLength(name) <= bytes && (!onlyPlain || /^[A-Za-z_][A-Za-z0-9_]*$/.test(name));
+const WORD = { any: /^[\p{L}_][\p{L}\p{N}_]*$/u, ascii: /^[A-Za-z_][A-Za-z0-9_]*$/ };
+
+function isAllowed(name: string, { bytes = Infinity, letters }: NameRule): boolean {
+  return byteLength(name) <= bytes && (letters === undefined || WORD[letters].test(name));
 }
 
-function plain(name: string): string {
-  const unaccented = name.normalize("NFD").replace(/\p{M}/gu, "").replace(/[^A-Za-z0-9_]/g, "_");
-  return /^[0-9]/.test(unaccented) ? `_${unaccented}` : unaccented;
+function onlyLetters(name: string, { letters }: NameRule): string {
+  if (letters === undefined) return name;
+  const word = letters === "any"
+    ? name.replace(/[^\p{L}\p{N}_]/gu, "_")
+    : name.normalize("NFD").replace(/\p{M}/gu, "").replace(/[^A-Za-z0-9_]/g, "_");
+  return /^\p{N}/u.test(word) ? `_${word}` : word;
 }
 
 function shorten(name: string, { bytes = Infinity }: NameRule): string {
@@ -67,23 +78,14 @@ function shorten(name: string, { bytes = Infinity }: NameRule): string {
   return cut(name.slice(0, name.length - kept.length), bytes - kept.length) + kept;
 }
 
-function unused(name: string, taken: ReadonlySet<string>, { bytes = Infinity }: NameRule): string {
-  let candidate = name;
-  for (let k = 2; taken.has(candidate.toLowerCase()); k++) {
-    candidate = cut(name, bytes - String(k).length) + k;
-  }
-  return candidate;
+function numbered(name: string, number: number, { bytes = Infinity }: NameRule): string {
+  return cut(name, bytes - String(number).length) + number;
 }
 
 /** The longest beginning of whole characters within so many bytes. */
 function cut(text: string, bytes: number): string {
-  let kept = "";
-  let length = 0;
-  for (const character of text) {
-    length += byteLength(character);
-    if (length > bytes) break;
-    kept += character;
-  }
+  let kept = text;
+  while (byteLength(kept) > bytes) kept = [...kept].slice(0, -1).join("");
   return kept;
 }
 

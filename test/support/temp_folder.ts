@@ -4,12 +4,8 @@
  * @module
  */
 
-/** Gives a test a folder of its own. */
-export async function withFolder(test: (folder: string) => Promise<void>): Promise<void> {
-  const folder = await Deno.makeTempDir({ prefix: "nearkin-test-" });
-  try {
-    await test(folder);
-  } finally {
-    await Deno.remove(folder, { recursive: true });
-  }
+/** A fresh folder, held with `using`. */
+export function tempFolder(): { readonly path: string } & Disposable {
+  const path = Deno.makeTempDirSync({ prefix: "nearkin_" });
+  return { path, [Symbol.dispose]: () => Deno.removeSync(path, { recursive: true }) };
 }

@@ -1,0 +1,69 @@
+/** Shuffled maps, eight of them side by side. */
+
+import { bufferEnd, bufferOf, openStream, refill } from "./stream";
+
+/** Fills `target` with the `n` singles of `values` in the order of permutation `index`. */
+export function shuffleColumn(
+  values: usize,
+  n: u32,
+  seedLow: u32,
+  seedHigh: u32,
+  purpose: u32,
+  index: u32,
+  stream: usize,
+  target: usize,
+): void {
+  memory.copy(target, values, (n as usize) << 2);
+  openStream(stream, ((seedHigh as u64) << 32) | (seedLow as u64), purpose, index);
+  shuffle(target, n, stream);
+}
+
+/** Fisher & Yates; the same order as `../shuffle.ts` gives. */
+function shuffle(values: usize, n: u32, stream: usize): void {
+  const end = bufferEnd(stream);
+  let at = end;
+  for (let left = n; left > 1;) {
+    if (at == end) {
+      refill(stream);
+      at = bufferOf(stream);
+    }
+    const product = (load<u32>(at) as u64) * (left as u64);
+    at += 4;
+    const low = product as u32;
+    if (low < left && low < (0 - left) % left) continue;
+    left--;
+    const a = values + ((left as usize) << 2), b = values + (((product >> 32) as usize) << 2);
+    const kept = load<u32>(a);
+    store<u32>(a, load<u32>(b));
+    store<u32>(b, kept);
+  }
+}
+
+/**
+ * Lays eight columns of `n` singles, one after the other, side by side in `lanes`: eight singles of area 0, eight
+ * of area 1, and so on. Four areas and four columns at a time.
+ */
+export function interleave(columns: usize, n: u32, lanes: usize): void {
+  const column = (n as usize) << 2;
+  let i: u32 = 0;
+  for (; i + 4 <= n; i += 4) {
+    for (let half: usize = 0; half < 2; half++) {
+      const from = columns + half * 4 * column + ((i as usize) << 2);
+      const to = lanes + ((i as usize) << 5) + half * 16;
+      const a = v128.load(from), b = v128.load(from + column);
+      const c = v128.load(from + 2 * column), d = v128.load(from + 3 * column);
+      const ab = v128.shuffle<f32>(a, b, 0, 4, 1, 5), cd = v128.shuffle<f32>(c, d, 0, 4, 1, 5);
+      const AB = v128.shuffle<f32>(a, b, 2, 6, 3, 7), CD = v128.shuffle<f32>(c, d, 2, 6, 3, 7);
+      v128.store(to, v128.shuffle<f32>(ab, cd, 0, 1, 4, 5));
+      v128.store(to, v128.shuffle<f32>(ab, cd, 2, 3, 6, 7), 32);
+      v128.store(to, v128.shuffle<f32>(AB, CD, 0, 1, 4, 5), 64);
+      v128.store(to, v128.shuffle<f32>(AB, CD, 2, 3, 6, 7), 96);
+    }
+  }
+  for (; i < n; i++) {
+    for (let lane: usize = 0; lane < 8; lane++) {
+      const value = load<f32>(columns + lane * column + ((i as usize) << 2));
+      store<f32>(lanes + ((i as usize) << 5) + lane * 4, value);
+    }
+  }
+}

@@ -1,0 +1,226 @@
+/**
+ * The conditional permutation test of a weighted sum of neighbors, the form behind every local statistic
+ * that holds an area's own value and permutes the others.
+ *
+ * @module
+ */
+import type { Weights } from "../weights/weights.ts";
+import { countArrangements } from "./arrangement_counts.ts";
+import { BLOCK } from "./dealer.ts";
+import { type LocalRows, scaledRow, scaledSum, sortRows } from "./local_rows.ts";
+import type { PermuteOptions } from "./options.ts";
+import { orderAreas } from "./order_areas.ts";
+import type { RankedJob } from "./ranked_job.ts";
+import { runJob } from "./run_job.ts";
+import { type Seed, seedFromText } from "./seed.ts";
+import { createSubsetCounter, smallerSide, subsetsOf } from "./subset_counts.ts";
+import { AREAS_PER_UNIT, TAIL_HITS, type WeighedJob } from "./weighed_job.ts";
+
+/** Counts of each area, length n; `permutations` is 0 where the area is alone or was not asked for. */
+export interface SumCounts {
+  /** Permutations whose neighbors' sum is at least the observed one, ties included. */
+  readonly atLeast: Uint32Array;
+  /** Permutations whose neighbors' sum is at most the observed one, ties included. */
+  readonly atMost: Uint32Array;
+  /** Permutations drawn, or cases enumerated. */
+  readonly permutations: Uint32Array;
+  /** 1 where every case was counted. */
+  readonly enumerated: Uint8Array;
+  /** 1 where drawing stopped early, at the draw that gave the rarer tail enough. */
+  readonly stopped: Uint8Array;
+}
+
+/** Options of {@link permuteNeighborSums}, all of which are settled. */
+export interface SumOptions extends PermuteOptions {
+  readonly permutations: number;
+  /** Areas to test, ascending; all by default. */
+  readonly areas?: Uint32Array;
+}
+
+/** Draws that every area of unequal weights gets before the stopping rule is asked. */
+const FIRST_DRAWS = 10 * BLOCK;
+
+/**
+ * Counts, for each area, how often the weighted sum of its neighbors' scores would be as large or as small
+ * if the other n - 1 scores were permuted. `z` are standard scores, already checked; each row is scaled to a
+ * largest weight of 1, and sums within 1e-10 count as equal.
+ *
+ * Rows of equal weights are ranked among shared draws; rows of unequal weights are weighed, and go on
+ * beyond 10,240 draws only where a tail is still rare. Where fewer cases exist than permutations are asked
+ * for, they are enumerated. Cost: see `ranked_job.ts` and `weighed_job.ts`.
+ */
+export async function permuteNeighborSums(
+  z: Float64Array,
+  weights: Weights,
+  options: SumOptions,
+): Promise<SumCounts> {
+  const n = z.length;
+  const counts: SumCounts = {
+    atLeast: new Uint32Array(n),
+    atMost: new Uint32Array(n),
+    permutations: new Uint32Array(n),
+    enumerated: new Uint8Array(n),
+    stopped: new Uint8Array(n),
+  };
+  const seed = seedFromText(options.seed ?? "nearkin");
+  const rows = sortRows(weights, options);
+  enumerateSubsets(counts, { z, weights, areas: rows.subsets });
+  enumerateArrangements(counts, { z, weights, areas: rows.arrangements });
+  await sampleRanked(counts, { z, weights, seed, rows, options });
+  await sampleWeighed(counts, { z, weights, seed, rows, options });
+  return counts;
+}
+
+interface Task {
+  readonly z: Float64Array;
+  readonly weights: Weights;
+}
+
+function enumerateSubsets(counts: SumCounts, task: Task & { areas: Uint32Array }): void {
+  const { z, weights, areas } = task;
+  if (areas.length === 0) return;
+  const neighborsOf = (area: number) => weights.offsets[area + 1] - weights.offsets[area];
+  const largest = areas.reduce(
+    (max, area) => Math.max(max, smallerSide(z.length, neighborsOf(area))),
+    0,
+  );
+  const counter = createSubsetCounter(z, largest);
+  for (const area of areas) {
+    const k = neighborsOf(area);
+    record(counts, area, {
+      ...counter.count(area, k, scaledSum(weights, area, z)),
+      permutations: subsetsOf(z.length - 1, k),
+      enumerated: true,
+    });
+  }
+}
+
+function enumerateArrangements(counts: SumCounts, task: Task & { areas: Uint32Array }): void {
+  const { z, weights, areas } = task;
+  for (const area of areas) {
+    const row = scaledRow(weights, area);
+    const found = countArrangements(z, {
+      area,
+      weights: row,
+      observed: scaledSum(weights, area, z),
+    });
+    let permutations = 1;
+    for (let m = 0; m < row.length; m++) permutations *= z.length - 1 - m;
+    record(counts, area, { ...found, permutations, enumerated: true });
+  }
+}
+
+type Sampling = Task & { seed: Seed; rows: LocalRows; options: SumOptions };
+
+async function sampleRanked(counts: SumCounts, sampling: Sampling): Promise<void> {
+  const { z, weights, seed, rows, options } = sampling;
+  if (rows.ranked.length === 0) return;
+  const { order, degrees, starts } = orderAreas(
+    rows.ranked,
+    rows.ranked.map((area) => weights.offsets[area + 1] - weights.offsets[area]),
+    Float64Array.from(rows.ranked, (area) => scaledSum(weights, area, z)),
+  );
+  const job: RankedJob = {
+    kind: "ranked",
+    seed,
+    permutations: options.permutations,
+    z: testedFirst(z, order),
+    observed: Float64Array.from(order, (area) => scaledSum(weights, area, z)),
+    degrees,
+    starts,
+  };
+  const parts = await runJob(job, options);
+  for (let a = 0; a < rows.ranked.length; a++) {
+    let atLeast = 0, atMost = 0;
+    for (const part of parts) {
+      atLeast += part.atLeast[a] | 0; // a worker's share may be below 0: see replaceItself
+      atMost += part.atMost[a] | 0;
+    }
+    record(counts, order[a], { atLeast, atMost, permutations: options.permutations });
+  }
+}
+
+/** Scores of the areas in `order`, followed by those of all others. */
+function testedFirst(z: Float64Array, order: Uint32Array): Float64Array {
+  const arranged = new Float64Array(z.length);
+  const isTested = new Uint8Array(z.length);
+  order.forEach((area, place) => {
+    arranged[place] = z[area];
+    isTested[area] = 1;
+  });
+  let next = order.length;
+  for (let area = 0; area < z.length; area++) if (!isTested[area]) arranged[next++] = z[area];
+  return arranged;
+}
+
+/** First a fixed number of draws for all, then more for those that are still rare in a tail. */
+async function sampleWeighed(counts: SumCounts, sampling: Sampling): Promise<void> {
+  const { rows, options } = sampling;
+  const first = Math.min(options.permutations, FIRST_DRAWS);
+  await weigh(counts, { ...sampling, areas: rows.weighed, from: 0, to: first, stopping: false });
+  if (first === options.permutations) return;
+  const rare = rows.weighed.filter((a) =>
+    Math.min(counts.atLeast[a], counts.atMost[a]) < TAIL_HITS
+  );
+  await weigh(counts, {
+    ...sampling,
+    areas: rare,
+    from: first,
+    to: options.permutations,
+    stopping: true,
+  });
+}
+
+type Weighing = Sampling & { areas: Uint32Array; from: number; to: number; stopping: boolean };
+
+async function weigh(counts: SumCounts, weighing: Weighing): Promise<void> {
+  const { z, weights, seed, areas, from, to, stopping, options } = weighing;
+  if (areas.length === 0) return;
+  const offsets = new Uint32Array(areas.length + 1);
+  areas.forEach((area, a) => {
+    offsets[a + 1] = offsets[a] + weights.offsets[area + 1] - weights.offsets[area];
+  });
+  const scaled = new Float64Array(offsets[areas.length]);
+  areas.forEach((area, a) => scaled.set(scaledRow(weights, area), offsets[a]));
+  const job: WeighedJob = {
+    kind: "weighed",
+    seed,
+    from,
+    to,
+    stopping,
+    z,
+    areas,
+    offsets,
+    weights: scaled,
+    observed: Float64Array.from(areas, (area) => scaledSum(weights, area, z)),
+    atLeast: Uint32Array.from(areas, (area) => counts.atLeast[area]),
+    atMost: Uint32Array.from(areas, (area) => counts.atMost[area]),
+  };
+  for (const part of (await runJob(job, options)).flat()) {
+    part.drawn.forEach((permutations, a) =>
+      record(counts, areas[part.unit * AREAS_PER_UNIT + a], {
+        atLeast: part.atLeast[a],
+        atMost: part.atMost[a],
+        permutations,
+        stopped: part.stopped[a] === 1,
+      })
+    );
+  }
+}
+
+interface AreaCounts {
+  readonly atLeast: number;
+  readonly atMost: number;
+  readonly permutations: number;
+  readonly enumerated?: boolean;
+  readonly stopped?: boolean;
+}
+
+/** Enters an area's counts into the record that this module is filling. */
+function record(counts: SumCounts, area: number, found: AreaCounts): void {
+  counts.atLeast[area] = found.atLeast;
+  counts.atMost[area] = found.atMost;
+  counts.permutations[area] = found.permutations;
+  counts.enumerated[area] = Number(found.enumerated ?? false);
+  counts.stopped[area] = Number(found.stopped ?? false);
+}

@@ -1,0 +1,83 @@
+/**
+ * How far neighbors are apart, and which distances would leave nobody out.
+ *
+ * @module
+ */
+import { joinSets, singleSets } from "./disjoint_sets.ts";
+import { distance } from "./gabriel.ts";
+import { nearestTable } from "./nearest_table.ts";
+import { distinctPlaces } from "./places.ts";
+import { indexPoints } from "./point_index.ts";
+import { type RoundedPoints, roundPoints } from "./rounded_points.ts";
+import type { Topology } from "./topology.ts";
+import { triangulate } from "./triangulate.ts";
+
+/**
+ * Length of every link, parallel to `indices`, in the units of the points; NaN where an end has no place.
+ *
+ * @param points x and y of each area.
+ */
+export function linkDistances({ offsets, indices }: Topology, points: Float64Array): Float64Array {
+  const lengths = new Float64Array(indices.length);
+  for (let i = 0; i + 1 < offsets.length; i++) {
+    for (let link = offsets[i]; link < offsets[i + 1]; link++) {
+      lengths[link] = distance(points, i, indices[link]);
+    }
+  }
+  return lengths;
+}
+
+/**
+ * Distance from each point to its k-th nearest other, in the units of the points; NaN for a point
+ * without a place, and for all when there are not more than k points. Cost: see `nearestTable`.
+ */
+export function kNearestDistances(points: Float64Array, k: number): Float64Array {
+  const index = indexPoints(roundPoints(points));
+  const distances = new Float64Array(points.length / 2).fill(NaN);
+  if (k >= index.count) return distances;
+  const { near, width } = nearestTable(index, k);
+  for (let at = 0; at < index.count; at++) {
+    distances[index.ids[at]] = distance(index.xy, at, near[at * width + k - 1]);
+  }
+  return distances;
+}
+
+/** The shortest distances that do what a band should do. */
+export interface ConnectingDistances {
+  /** Shortest distance at which no area is alone: the largest of all distances to a nearest area. */
+  readonly noneAlone: number;
+  /** Shortest distance at which all areas hang together: the longest edge of the minimum spanning tree. */
+  readonly oneComponent: number;
+}
+
+/**
+ * Both distances, exact to the grain of the points; NaN with fewer than two located points.
+ *
+ * Cost: a triangulation (the minimum spanning tree is part of it) and a sort of its edges.
+ */
+export function connectingDistances(points: Float64Array): ConnectingDistances {
+  const rounded = roundPoints(points);
+  let noneAlone = NaN;
+  for (const nearest of kNearestDistances(points, 1)) {
+    if (!(nearest <= noneAlone) && !Number.isNaN(nearest)) noneAlone = nearest;
+  }
+  return { noneAlone, oneComponent: Number.isNaN(noneAlone) ? NaN : longestOfTree(rounded) };
+}
+
+/** Longest edge of the minimum spanning tree (Kruskal 1956); 0 where all points are at one place. */
+function longestOfTree(points: RoundedPoints): number {
+  const { xy } = distinctPlaces(points);
+  const { one, other } = triangulate(xy);
+  const lengths = Float64Array.from(one, (p, e) => distance(xy, p, other[e]));
+  const order = new Uint32Array(one.length).map((_, e) => e)
+    .sort((a, b) => lengths[a] - lengths[b]);
+  const parents = singleSets(xy.length / 2);
+  let missing = xy.length / 2 - 1, last = 0;
+  for (const e of order) {
+    if (missing === 0) break;
+    if (!joinSets(parents, one[e], other[e])) continue;
+    missing--;
+    last = lengths[e];
+  }
+  return last;
+}
