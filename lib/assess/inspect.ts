@@ -105,6 +105,9 @@ async function distancesOf(layer: Layer): Promise<Inspection["distances"]> {
   return { ...connectingDistances(points), unit: laid.metric.unit };
 }
 
+/** Names of fields that measure or number areas rather than say something about them. */
+const HOUSEKEEPING = /^(area|perimeter|shape_?\w*|length|.*(id|no|_)|fips|x|y|lon|lat)$/i;
+
 function suggestCommand(
   path: string,
   layer: Layer,
@@ -113,7 +116,8 @@ function suggestCommand(
   const full = (field: FieldSummary) => field.missing === 0 && field.distinct === layer.count;
   const id = fields.find((field) => full(field) && field.kind === "text") ??
     fields.find((field) => full(field) && field.kind === "integer");
-  const varied = (field: FieldSummary) => field !== id && field.distinct > 2;
+  const varied = (field: FieldSummary) =>
+    field !== id && field.distinct > 2 && !HOUSEKEEPING.test(field.name);
   const value = fields.find((field) => field.kind === "number" && varied(field)) ??
     fields.find((field) => field.kind === "integer" && varied(field) && !full(field));
   const parts = ["nearkin", "assess", shellWord(path)];

@@ -9,7 +9,7 @@ import { standardize, TIE } from "../statistics/standardize.ts";
 import { weightSums } from "../weights/sums.ts";
 import type { Weights } from "../weights/weights.ts";
 import { visitOrders } from "./all_orders.ts";
-import { checkPermutations, type PermuteOptions } from "./options.ts";
+import { checkPermutations, checkWorkers, type PermuteOptions } from "./options.ts";
 import type { TailCounts } from "./p_value.ts";
 import { type PairLinks, pairLinks, quadraticForm } from "./pair_links.ts";
 import { runJob } from "./run_job.ts";
@@ -61,6 +61,7 @@ export async function permuteMoran(
   options: PermuteOptions = {},
 ): Promise<GlobalReference[]> {
   const permutations = checkPermutations(options.permutations ?? 999);
+  if (options.workers !== undefined) checkWorkers(options.workers);
   const { z } = standardize(values);
   const s0 = definitions.map((weights) => {
     checkLengths(values, weights);

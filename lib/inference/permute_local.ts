@@ -7,7 +7,7 @@ import { checkLengths } from "../statistics/check_lengths.ts";
 import { standardize, TIE } from "../statistics/standardize.ts";
 import type { Weights } from "../weights/weights.ts";
 import { permuteNeighborSums, type SumCounts } from "./neighbor_sums.ts";
-import { checkPermutations, type PermuteOptions } from "./options.ts";
+import { checkPermutations, checkWorkers, type PermuteOptions } from "./options.ts";
 
 /**
  * Counts of each area, length n, in terms of local I: `atLeast` is how many permutations gave an I at least
@@ -66,6 +66,7 @@ export async function permuteLocalMoran(
 ): Promise<LocalReference> {
   checkLengths(values, weights);
   const permutations = checkPermutations(options.permutations ?? DEFAULT_LOCAL_PERMUTATIONS);
+  if (options.workers !== undefined) checkWorkers(options.workers);
   const { z } = standardize(values);
   return turnBySign(await permuteNeighborSums(z, weights, { ...options, permutations }), z);
 }

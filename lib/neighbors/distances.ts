@@ -64,20 +64,36 @@ export function connectingDistances(points: Float64Array): ConnectingDistances {
   return { noneAlone, oneComponent: Number.isNaN(noneAlone) ? NaN : longestOfTree(rounded) };
 }
 
-/** Longest edge of the minimum spanning tree (Kruskal 1956); 0 where all points are at one place. */
+/**
+ * Longest edge of the minimum spanning tree (Kruskal 1956): the shortest length at which the edges up to it
+ * connect everybody, found by halving. 0 where all points are at one place.
+ */
 function longestOfTree(points: RoundedPoints): number {
   const { xy } = distinctPlaces(points);
-  const { one, other } = triangulate(xy);
+  const { one, other } = triangulate({ xy, perUnit: points.perUnit });
   const lengths = Float64Array.from(one, (p, e) => distance(xy, p, other[e]));
-  const order = new Uint32Array(one.length).map((_, e) => e)
-    .sort((a, b) => lengths[a] - lengths[b]);
-  const parents = singleSets(xy.length / 2);
-  let missing = xy.length / 2 - 1, last = 0;
-  for (const e of order) {
-    if (missing === 0) break;
-    if (!joinSets(parents, one[e], other[e])) continue;
-    missing--;
-    last = lengths[e];
+  const sorted = lengths.toSorted();
+  let low = 0, high = sorted.length - 1;
+  while (low < high) {
+    const middle = (low + high) >> 1;
+    if (connects(xy.length / 2, { one, other, lengths }, sorted[middle])) high = middle;
+    else low = middle + 1;
   }
-  return last;
+  return sorted.length > 0 ? sorted[low] : 0;
+}
+
+interface MeasuredEdges {
+  readonly one: Uint32Array;
+  readonly other: Uint32Array;
+  readonly lengths: Float64Array;
+}
+
+/** Whether the edges up to a length connect all places. */
+function connects(places: number, { one, other, lengths }: MeasuredEdges, limit: number): boolean {
+  const parents = singleSets(places);
+  let pieces = places;
+  for (let e = 0; e < one.length && pieces > 1; e++) {
+    if (lengths[e] <= limit && joinSets(parents, one[e], other[e])) pieces--;
+  }
+  return pieces <= 1;
 }

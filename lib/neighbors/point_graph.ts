@@ -24,7 +24,7 @@ import { triangulate } from "./triangulate.ts";
 export function pointGraphFinder(points: RoundedPoints): (kind: PointGraph["kind"]) => Topology {
   const { perUnit } = points;
   const places = once(() => distinctPlaces(points));
-  const triangulated = once(() => triangulate(places().xy));
+  const triangulated = once(() => triangulate({ xy: places().xy, perUnit }));
   const gabriel = once(() => gabrielEdges(places().xy, triangulated(), 1 / perUnit));
   const edges = {
     triangulated,

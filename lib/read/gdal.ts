@@ -46,7 +46,6 @@ export interface GdalDriver {
   /** Without dots; empty where the format has none of its own. */
   readonly extensions: readonly string[];
   readonly reads: boolean;
-  readonly writes: boolean;
 }
 
 type ModuleFactory = (options: Record<string, unknown>) => Promise<GdalModule>;
@@ -146,7 +145,6 @@ export class Gdal {
         title: item("DMD_LONGNAME").trim(),
         extensions: item("DMD_EXTENSIONS").split(" ").filter((extension) => extension !== ""),
         reads: item("DCAP_OPEN") === "YES",
-        writes: item("DCAP_CREATE") === "YES",
       });
     }
     return drivers;

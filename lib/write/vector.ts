@@ -38,7 +38,7 @@ export interface Converted {
  * @param name File name without ending, and name of the layer.
  * @throws UsageError for a format that is not in `WRITABLE_FORMATS`.
  * @throws UnwritableError where the format cannot hold the layer, with GDAL's reason.
- * Cost: 0.2 s (FlatGeobuf) to about 5 s (GML, KML) for 100,000 polygons.
+ * Cost for 100,000 polygons: FlatGeobuf 0.3 s, GeoPackage 1 s, Shapefile 2 s, text formats 5 to 10 s.
  */
 export async function convertFgb(
   fgb: Uint8Array,

@@ -112,3 +112,21 @@ export function geoJsonFromTopology(topology: TopoJson, name: string): GeoJson {
     })),
   };
 }
+
+/** The same features with every position moved. */
+export function moveGeoJson(
+  { features }: GeoJson,
+  move: (x: number, y: number) => readonly [number, number],
+): GeoJson {
+  // deno-lint-ignore no-explicit-any -- nested as deep as the type says
+  const moved = (coordinates: any): any =>
+    typeof coordinates[0] === "number"
+      ? move(coordinates[0], coordinates[1])
+      : coordinates.map(moved);
+  return {
+    features: features.map(({ properties, geometry }) => ({
+      properties,
+      geometry: geometry && { ...geometry, coordinates: moved(geometry.coordinates) },
+    })),
+  };
+}

@@ -67,8 +67,8 @@ function sharedSides(cells: readonly Point[], numbers: ReadonlyMap<string, numbe
   return { offsets: Uint32Array.from(offsets), indices: Uint32Array.from(indices) };
 }
 
-/** A closed ring whose corners and bends are those of the neighbors too. */
-function outline([x, y]: Point, size: number, bends: number): Point[] {
+/** Coordinates of a closed ring whose corners and bends are those of the neighbors too. */
+function outline([x, y]: Point, size: number, bends: number): number[] {
   const unit = size / 2;
   const corners = CORNERS.map(([dx, dy]): Point => {
     const cx = x + dx, cy = y + dy;
@@ -77,32 +77,40 @@ function outline([x, y]: Point, size: number, bends: number): Point[] {
       unit * (cy / Math.sqrt(3) + 0.7 * (chance(cy, cx + 0.5) - 0.5)),
     ];
   });
-  const ring = corners.flatMap((from, i) => bent(from, corners[(i + 1) % 6], bends).slice(0, -1));
-  return [...ring, ring[0]];
+  const ring: number[] = [];
+  corners.forEach((from, i) => addSide(ring, from, corners[(i + 1) % 6], bends));
+  ring.push(ring[0], ring[1]);
+  return ring;
 }
 
-/** A side with its middle moved aside, and so on for its halves; the same from both ends. */
-function bent(from: Point, to: Point, bends: number): Point[] {
-  if (bends === 0) return [from, to];
+/** Adds a side but for its end: its middle moved aside, and so on for its halves; the same from both ends. */
+function addSide(ring: number[], from: Point, to: Point, bends: number): void {
+  if (bends === 0) {
+    ring.push(from[0], from[1]);
+    return;
+  }
   const dx = to[0] - from[0], dy = to[1] - from[1];
   const middleX = (from[0] + to[0]) / 2, middleY = (from[1] + to[1]) / 2;
   // Seen from the other end the side runs backward, so the sign of its direction must not matter.
   const side = dx > 0 || (dx === 0 && dy > 0) ? 1 : -1;
   const aside = 0.3 * side * (chance(Math.round(middleX), Math.round(middleY)) - 0.5);
   const middle: Point = [middleX - aside * dy, middleY + aside * dx];
-  return [...bent(from, middle, bends - 1).slice(0, -1), ...bent(middle, to, bends - 1)];
+  addSide(ring, from, middle, bends - 1);
+  addSide(ring, middle, to, bends - 1);
 }
 
-function polygons(rings: readonly (readonly Point[])[]): FlatGeometry {
+function polygons(rings: readonly (readonly number[])[]): FlatGeometry {
   const steps = Uint32Array.from({ length: rings.length + 1 }, (_, i) => i);
   const vertexStarts = new Uint32Array(rings.length + 1);
-  rings.forEach((ring, i) => vertexStarts[i + 1] = vertexStarts[i] + ring.length);
+  rings.forEach((ring, i) => vertexStarts[i + 1] = vertexStarts[i] + ring.length / 2);
+  const xy = new Float64Array(2 * vertexStarts[rings.length]);
+  rings.forEach((ring, i) => xy.set(ring, 2 * vertexStarts[i]));
   return {
     kinds: new Uint8Array(rings.length).fill(3),
     partStarts: steps,
     ringStarts: steps,
     vertexStarts,
-    xy: Float64Array.from(rings.flat(2)),
+    xy,
   };
 }
 
