@@ -3,7 +3,7 @@
  *
  * @module
  */
-import { readColumn } from "../layer/column.ts";
+import { readColumns } from "../layer/column.ts";
 import { CAUTIONS } from "../sweep/cautions.ts";
 import type { ColumnValues } from "../layer/layer.ts";
 import { VERSION } from "../layer/version.ts";
@@ -54,6 +54,7 @@ export async function writeAssessment(
   options.signal?.throwIfAborted();
   options.onProgress?.("Drawing the report");
   const input = reportInput(assessment);
+  const figures = plotFigures(input);
   const renamed = [
     ...fields.renamed.map((names) => ({ file: "areas.fgb", ...names })),
     ...layers.renamed,
@@ -63,9 +64,9 @@ export async function writeAssessment(
     ["areas.csv", csvText([...originalColumns(assessment), ...added])],
     ["links.fgb", linksLayer(assessment)],
     ["results.json", prettyJson(results)],
-    ["report.html", reportPage(input)],
+    ["report.html", reportPage(input, figures)],
     ["style.sld", styleSld(areas)],
-    ...plotFiles(input),
+    ...Array.from(figures, ([name, svg]): [string, string] => [`plots/${name}.svg`, svg]),
     ["record.json", prettyJson(recordOf(assessment, renamed))],
   ];
   options.signal?.throwIfAborted();
@@ -88,12 +89,8 @@ async function areaLayers(
   return { files, renamed };
 }
 
-function plotFiles(input: ReportInput): [string, string][] {
-  return Array.from(plotFigures(input), ([name, svg]) => [`plots/${name}.svg`, svg]);
-}
-
 function originalColumns({ layer }: Assessment): ColumnValues[] {
-  return layer.columns.map(({ name }) => readColumn(layer, name));
+  return readColumns(layer, layer.columns.map(({ name }) => name));
 }
 
 function linksLayer({ layer, links, places, names, plan }: Assessment): Uint8Array {

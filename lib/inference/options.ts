@@ -24,7 +24,7 @@ export interface PermuteOptions {
   /** Told the share of the work done, 0 to 1, about every 100 ms. */
   readonly onProgress?: (share: number) => void;
   /**
-   * Starts a worker that runs `lib/inference/worker.ts`.
+   * Starts a worker that runs `lib/inference/count_worker.ts`.
    * @default a web worker on that file
    */
   readonly startWorker?: () => Worker;

@@ -88,5 +88,5 @@ function serve(
 }
 
 function startWebWorker(): Worker {
-  return new Worker(new URL("./worker.ts", import.meta.url), { type: "module" });
+  return new Worker(new URL("./count_worker.ts", import.meta.url), { type: "module" });
 }

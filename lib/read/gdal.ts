@@ -71,6 +71,7 @@ export class Gdal {
   #folders = 0;
   #broken = false;
 
+  /** @param messages Where the module puts the lines it prints. */
   constructor(module: GdalModule, messages: string[]) {
     this.module = module;
     this.#messages = messages;
@@ -201,6 +202,8 @@ async function startGdal(): Promise<Gdal> {
       ENV.PROJ_LIB = "/usr/share/proj";
       ENV.GDAL_DATA = "/usr/share/gdal";
       ENV.GDAL_NUM_THREADS = "0";
+      // A Shapefile that came without its .shx can be read all the same.
+      ENV.SHAPE_RESTORE_SHX = "YES";
       // Conversion by Arrow batches is no faster here and fails on null geometry of mixed types.
       ENV.OGR2OGR_USE_ARROW_API = "NO";
     }],

@@ -42,6 +42,7 @@ export class GdalFolder implements Disposable {
   readonly #path: string;
   readonly #open = new Set<number>();
 
+  /** Makes the folder in this GDAL's memory. */
   constructor(gdal: Gdal) {
     this.#gdal = gdal;
     this.#path = gdal.freshPath();
@@ -150,6 +151,7 @@ export class GdalFolder implements Disposable {
     });
   }
 
+  /** Closes the datasets and deletes the files. */
   [Symbol.dispose](): void {
     if (this.#gdal.broken) return;
     for (const dataset of this.#open) this.#gdal.call("GDALClose", dataset);

@@ -47,12 +47,8 @@ export async function readSourceFiles(path: string): Promise<SourceFiles> {
   if (found.isDirectory()) return await readFolder(path, name);
   const main = { name, bytes: await readBytes(path) };
   if (isZip(main.bytes)) return unpack(main);
-  const companions = await findCompanions(path);
-  const files = await Promise.all(companions.map(async (companion) => ({
-    name: companion,
-    bytes: await readBytes(join(dirname(path), companion)),
-  })));
-  return withoutKml({ name, files: [main, ...files], datasets: [name] });
+  const companions = await readCompanions(path);
+  return withoutKml({ name, files: [main, ...companions], datasets: [name] });
 }
 
 /** The same for bytes that are in memory already; a zip archive is unpacked. */
@@ -78,13 +74,24 @@ async function readFolder(path: string, name: string): Promise<SourceFiles> {
   return { name, files, datasets: [name] };
 }
 
-async function findCompanions(path: string): Promise<string[]> {
+/** Side files get the spelling in which GDAL looks for them, as its memory tells letter case apart. */
+async function readCompanions(path: string): Promise<NamedBytes[]> {
   const ending = extname(path);
   const wanted = COMPANIONS[ending.toLowerCase()] ?? [];
   if (wanted.length === 0) return [];
-  const stem = basename(path, ending).toLowerCase();
-  const names = await readdir(dirname(path));
-  return names.filter((name) => wanted.some((side) => name.toLowerCase() === stem + side)).sort();
+  const stem = basename(path, ending);
+  const beside = await readdir(dirname(path));
+  const found = wanted.flatMap((side) => {
+    const spelled = (stem + side).toLowerCase();
+    const name = beside.find((candidate) => candidate.toLowerCase() === spelled);
+    return name === undefined ? [] : [{ name, as: stem + side }];
+  });
+  return await Promise.all(
+    found.map(async ({ name, as }) => ({
+      name: as,
+      bytes: await readBytes(join(dirname(path), name)),
+    })),
+  );
 }
 
 async function readBytes(path: string): Promise<Uint8Array> {

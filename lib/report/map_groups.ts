@@ -18,8 +18,10 @@ import { short } from "./svg.ts";
 /** Name of the class map, with which its ids begin. */
 export const MAP_NAME = "class-map";
 
-/** Layers with more areas than this get one path a group instead of an element an area with a tooltip. */
+/** Layers with more areas than this get no element for each area with a tooltip. */
 const MOST_WITH_TOOLTIP = 3000;
+/** Their areas are merged so many into a path: few elements, yet browsers need not redraw all for a part. */
+const MERGED = 1000;
 
 /** From the back to the front. */
 const DRAWING_ORDER: readonly AreaClass[] = [
@@ -73,12 +75,14 @@ function keyOf(kind: ShapeKind, name: AreaClass, fragile: boolean): string {
 
 /** Sizes of what is drawn, in map units. */
 export interface MapSizes {
-  /** Side of the square that one area has for itself on average. */
-  readonly spacing: number;
+  /** Width of outlines; 0 where areas are too many and too small to be told apart by them. */
   readonly outline: number;
   readonly radius: number;
   readonly tile: number;
 }
+
+/** Areas with less room than this, as the side of a square in map units, are drawn without outlines. */
+const LEAST_OUTLINED = 10;
 
 /** Thinner outlines and smaller marks and hatches where areas are many. */
 export function mapSizes(frame: MapFrame, count: number): MapSizes {
@@ -86,10 +90,9 @@ export function mapSizes(frame: MapFrame, count: number): MapSizes {
   const between = (low: number, share: number, high: number) =>
     Math.min(high, Math.max(low, share * spacing));
   return {
-    spacing,
-    outline: short(between(0.2, 0.05, 1.6)),
+    outline: spacing < LEAST_OUTLINED ? 0 : short(between(0.2, 0.05, 1.6)),
     radius: between(4, 0.17, 13),
-    tile: between(7, 0.2, 14),
+    tile: between(9, 0.2, 14),
   };
 }
 
@@ -109,9 +112,14 @@ export function drawGroup(
     ? rows.map((row) =>
       markup`<path d="${pathOf([row])}"><title>${areaTooltip(input, row)}</title></path>`
     )
-    : markup`<path d="${pathOf(rows)}"/>`;
+    : chunks(rows, MERGED).map((some) => markup`<path d="${pathOf(some)}"/>`);
   return markup`<g ${groupStyle(group, sizes)}>${paths}</g>
 `;
+}
+
+function chunks(rows: readonly number[], size: number): (readonly number[])[] {
+  const count = Math.ceil(rows.length / size);
+  return Array.from({ length: count }, (_, i) => rows.slice(i * size, (i + 1) * size));
 }
 
 /** Attributes of a group. */
@@ -128,6 +136,8 @@ function polygonStyle({ name, fragile }: Omit<MapGroup, "rows">, { outline }: Ma
       dashed(ink, Math.max(outline, 0.8) * 1.5)
     }`;
   }
+  // Without outlines, soft edges would leave light seams between neighbors.
+  if (outline === 0) return markup`fill="${fill}" shape-rendering="crispEdges"`;
   // White areas need an outline that is not white.
   const isBlank = hatch === "dots" || hatch === "cross";
   return markup`fill="${fill}" stroke="${

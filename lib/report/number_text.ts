@@ -31,7 +31,7 @@ export function valueText(value: number | null): string {
   if (!isNumber(value)) return NONE;
   if (value === 0) return "0";
   const power = Math.floor(Math.log10(Math.abs(value)));
-  if (power < -5 || power > 14) return value.toExponential(3).replaceAll("-", MINUS);
+  if (power < -9 || power > 14) return value.toExponential(3).replaceAll("-", MINUS);
   const text = decimalText(value, Math.max(0, 3 - power));
   return text.includes(".") ? text.replace(/\.?0+$/, "") : text;
 }

@@ -13,6 +13,9 @@ import { INK, short, svgFigure, svgLine, svgText } from "./svg.ts";
 const SIZE = { width: 524, height: 330 } as const;
 const PLOT: PlotArea = { left: 62, top: 62, right: 510, bottom: 274 };
 
+/** Farther out than this many times the range of the bins, the observed I is only pointed at. */
+const FARTHEST_DRAWN = 6;
+
 type Bins = NonNullable<ReferenceDistribution["bins"]>;
 
 /**
@@ -25,7 +28,9 @@ export function referenceHistogram({ results }: ReportInput): Markup | null {
   const { bins } = reference;
   const { value, expected, permutations, enumerated } = moranI;
   if (bins === null || value === null || expected === null) return null;
-  const x = linearScale(domainOf(bins, [value, expected]), [PLOT.left, PLOT.right]);
+  const far = isFarOut(bins, value);
+  const marked = far ? [expected] : [value, expected];
+  const x = linearScale(domainOf(bins, marked), [PLOT.left, PLOT.right]);
   const y = linearScale([0, Math.max(...bins.counts) * 1.05], [PLOT.bottom, PLOT.top]);
   const maps = enumerated ? "arrangements" : "permutations";
   return svgFigure(
@@ -40,13 +45,23 @@ export function referenceHistogram({ results }: ReportInput): Markup | null {
     bars(bins, x, y),
     bottomAxis(x, PLOT, { title: "Moran's I" }),
     marker({ at: expected, text: `expected ${decimalText(expected, 3)}`, top: 44 }, x),
-    marker({ at: value, text: `observed ${decimalText(value, 3)}`, top: 20, strong: true }, x),
+    far
+      ? pointer(value, reference)
+      : marker({ at: value, text: `observed ${decimalText(value, 3)}`, top: 20, strong: true }, x),
   );
+}
+
+/** Whether the observed I lies so far out that the bins would shrink to a line beside it. */
+function isFarOut({ start, width, counts }: Bins, value: number): boolean {
+  const range = width * counts.length;
+  const distance = Math.max(start - value, value - (start + range));
+  return distance > FARTHEST_DRAWN * range;
 }
 
 /** All bins and marked values, with some room. */
 function domainOf({ start, width, counts }: Bins, marked: readonly number[]): [number, number] {
-  const low = Math.min(start, ...marked), high = Math.max(start + width * counts.length, ...marked);
+  const end = start + width * counts.length;
+  const low = Math.min(start, ...marked), high = Math.max(end, ...marked);
   const room = 0.05 * (high - low);
   return [low - room, high + room];
 }
@@ -91,6 +106,22 @@ function marker(
       fill: color,
       weight: mark.strong ? 600 : 400,
       halo: "#FFFFFF",
+    })
+  }`;
+}
+
+/** Says where the observed I is, at the side of the plot beyond which it lies. */
+function pointer(value: number, { mean, sd }: ReferenceDistribution): Markup {
+  const above = value > (mean ?? 0);
+  const tip = above ? PLOT.right : PLOT.left, back = above ? -9 : 9;
+  const away = sd
+    ? `, ${wholeText(Math.abs(value - (mean ?? 0)) / sd)} standard deviations away`
+    : "";
+  return markup`<path d="M${tip} 15l${back} -6v12z" fill="${INK.mark}"/>${
+    svgText(tip + 2 * back, 20, `observed ${decimalText(value, 3)}${away}`, {
+      anchor: above ? "end" : "start",
+      fill: INK.mark,
+      weight: 600,
     })
   }`;
 }

@@ -136,9 +136,7 @@ function definitionLine({ y, color, definition }: Row, x: LinearScale, level: nu
 
 /** A band behind the main definition. */
 function stripe(y: number): Markup {
-  return markup`<rect x="0" y="${
-    y - ROW / 2
-  }" width="${WIDTH}" height="${ROW}" fill="#F3EFE8"/>`;
+  return markup`<rect x="0" y="${y - ROW / 2}" width="${WIDTH}" height="${ROW}" fill="#F3EFE8"/>`;
 }
 
 /** The rule, cut where it is too long, with all of it in a tooltip. */

@@ -7,33 +7,29 @@
  * @module
  */
 import * as z from "zod";
+import type { Family } from "../neighbors/rule.ts";
+import { TESTED_CLASSES } from "../sweep/area_classes.ts";
+import type { Steadiness } from "../sweep/stability.ts";
 
 const count = z.number().int().min(0);
 /** A number, or null where the statistic is undefined. */
 const figure = z.number().nullable();
 
-/** One class of an area, in plain words. */
-export const AREA_CLASSES = [
-  "high among high",
-  "low among low",
-  "high among low",
-  "low among high",
-  "no evidence",
-  "alone",
-  "no value",
-] as const;
+/** One class of an area, in plain words; `no value` is an area that was left out or not tested. */
+export const AREA_CLASSES = [...TESTED_CLASSES, "no value"] as const;
 /** See {@link AREA_CLASSES}. */
 export type AreaClass = typeof AREA_CLASSES[number];
 
-/** How far an area's class holds over the definitions of a sweep. */
-export const STEADINESS = ["steady", "mostly", "fragile", "quiet"] as const;
-/** See {@link STEADINESS}. */
-export type Steadiness = typeof STEADINESS[number];
+export type { Family, Steadiness };
 
-/** Families over which the sweep averages, so that ten bands do not outvote one contiguity. */
-export const FAMILIES = ["contiguity", "nearest", "band", "graph", "weighted", "links"] as const;
-/** See {@link FAMILIES}. */
-export type Family = typeof FAMILIES[number];
+const FAMILIES = [
+  "contiguity",
+  "nearest",
+  "band",
+  "graph",
+  "weighted",
+  "links",
+] as const satisfies readonly Family[];
 
 const neighbors = z.object({
   rule: z.string().describe("The neighbor rule in nearkin's grammar"),

@@ -112,7 +112,7 @@ for (const [kind, values] of Object.entries(awkwardValues(400))) {
       const { units } = weighedWorkload(job);
       const plain = finish(openWeighedCounter(job), units);
       assert.deepEqual(finish(openWeighedKernel(job, kernel), units), plain);
-      if (stopping) assert.ok(plain[0].stopped.includes(1) && plain[0].stopped.includes(0));
+      if (stopping) assert.ok(plain[0].stopped.includes(1));
     }
   });
 

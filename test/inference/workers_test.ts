@@ -8,7 +8,7 @@ function countingStarter() {
   const account = { started: 0, ended: 0 };
   const startWorker = () => {
     account.started++;
-    const worker = new Worker(new URL("../../lib/inference/worker.ts", import.meta.url), {
+    const worker = new Worker(new URL("../../lib/inference/count_worker.ts", import.meta.url), {
       type: "module",
     });
     const terminate = worker.terminate.bind(worker);
@@ -78,7 +78,7 @@ Deno.test("permuteLocalMoran() ends its workers when aborted, soon and with the 
 Deno.test("permuteLocalMoran() names the fault of a worker and ends all", async () => {
   let ended = 0;
   const startWorker = () => {
-    const source = "self.onmessage = () => { throw new Error('out of paper'); };";
+    const source = "self.onmessage = () => postMessage({ fault: 'out of paper' });";
     const worker = new Worker(
       URL.createObjectURL(new Blob([source], { type: "text/javascript" })),
       { type: "module" },

@@ -30,13 +30,29 @@ async function shapefile(stem: string): Promise<Record<string, Uint8Array>> {
 }
 
 Deno.test("readSourceFiles() takes the side files of a Shapefile in any letter case, and no others", async () => {
-  const members = await shapefile("town");
+  await shapefile("town");
   await Deno.rename(at("town.prj"), at("TOWN.PRJ"));
+  await Deno.rename(at("town.dbf"), at("Town.Dbf"));
   await Deno.writeTextFile(at("town.txt"), "not a part");
   const { files, datasets } = await readSourceFiles(at("town.shp"));
-  assert.deepEqual(files.map(({ name }) => name), ["town.shp", "TOWN.PRJ", "town.dbf", "town.shx"]);
+  assert.deepEqual(files.map(({ name }) => name), ["town.shp", "town.shx", "town.dbf", "town.prj"]);
   assert.deepEqual(datasets, ["town.shp"]);
-  assert.equal(files[0].bytes.length, members["town.shp"].length);
+  const layer = await readLayer(at("town.shp"));
+  assert.equal(layer.crs?.code, "EPSG:32632");
+  assert.deepEqual(layer.columns.map(({ name }) => name), ["name"]);
+});
+
+Deno.test("readLayer() reads a Shapefile that came without its index or in capitals", async () => {
+  await shapefile("lone");
+  await Deno.remove(at("lone.shx"));
+  assert.equal((await readLayer(at("lone.shp"))).count, 5);
+  const members = await shapefile("loud");
+  for (const [name, bytes] of Object.entries(members)) {
+    await Deno.remove(at(name));
+    await Deno.writeFile(at(name.toUpperCase()), bytes);
+  }
+  const layer = await readLayer(at("LOUD.SHP"));
+  assert.deepEqual([layer.count, layer.columns.length, layer.crs?.code], [5, 1, "EPSG:32632"]);
 });
 
 Deno.test("readLayer() reads a zipped Shapefile, in a folder of the archive too", async () => {

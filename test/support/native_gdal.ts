@@ -57,8 +57,8 @@ export async function readNatively(path: string, ...args: string[]): Promise<Nat
 
 function parseFeature(text: string): NativeFeature {
   const values = new Map(
-    Array.from(text.matchAll(/^  (\S+) \([^=]*\) = (.*)$/gm), ([, name, value]) => [name, value])
+    Array.from(text.matchAll(/^ {2}(\S+) \([^=]*\) = (.*)$/gm), ([, name, value]) => [name, value])
       .filter(([, value]) => value !== "(null)") as [string, string][],
   );
-  return { values, geometry: /^  ([A-Z]+(?: [ZM]+)? \([^=]*\))$/m.exec(text)?.[1] ?? null };
+  return { values, geometry: /^ {2}([A-Z]+(?: [ZM]+)? \([^=]*\))$/m.exec(text)?.[1] ?? null };
 }
