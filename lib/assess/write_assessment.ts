@@ -15,8 +15,8 @@ import { csvText } from "../write/csv_text.ts";
 import { linksFgb } from "../write/links_layer.ts";
 import { checkFolder, type FolderOptions, writeFolder } from "../write/outcome_folder.ts";
 import { engineName, prettyJson, type RunRecord } from "../write/record.ts";
-import { resultFields } from "../write/result_fields.ts";
-import { styleSld } from "../write/style_sld.ts";
+import { type ResultFields, resultFields } from "../write/result_fields.ts";
+import { type StyleOptions, styleSld } from "../write/style_sld.ts";
 import { convertFgb } from "../write/vector.ts";
 import type { Assessment } from "./assess.ts";
 import type { WorkOptions } from "./options.ts";
@@ -65,7 +65,7 @@ export async function writeAssessment(
     ["links.fgb", linksLayer(assessment)],
     ["results.json", prettyJson(results)],
     ["report.html", reportPage(input, figures)],
-    ["style.sld", styleSld(areas)],
+    ["style.sld", styleSld(areas, styleOptions(assessment, fields))],
     ...Array.from(figures, ([name, svg]): [string, string] => [`plots/${name}.svg`, svg]),
     ["record.json", prettyJson(recordOf(assessment, renamed))],
   ];
@@ -87,6 +87,16 @@ async function areaLayers(
     for (const names of written.renamed) renamed.push({ file: written.files[0].name, ...names });
   }
   return { files, renamed };
+}
+
+/** The fields the style looks at, under the names they got. */
+function styleOptions({ layer, areas }: Assessment, { renamed }: ResultFields): StyleOptions {
+  const nameOf = (field: string) => renamed.find(({ from }) => from === field)?.to ?? field;
+  return {
+    shape: layer.shape,
+    classField: nameOf(`${areas.prefix}_class`),
+    steadyField: nameOf(`${areas.prefix}_steady`),
+  };
 }
 
 function originalColumns({ layer }: Assessment): ColumnValues[] {

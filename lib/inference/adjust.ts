@@ -3,6 +3,7 @@
  *
  * @module
  */
+import { lowerBound, upperBound } from "./sorted.ts";
 
 /** Ways to adjust; `bh` and `by` bound the false-discovery rate, `bonferroni` and `holm` any false alarm. */
 export const ADJUSTMENTS = ["none", "bonferroni", "holm", "bh", "by"] as const;
@@ -32,38 +33,40 @@ export function adjustP(p: Float64Array, method: Adjustment): Float64Array {
     }
   }
   if (method === "none") return p.slice();
-  const tested = ascendingOrder(p);
-  if (method === "bonferroni") return p.map((value) => Math.min(1, value * tested.length));
-  return method === "holm" ? stepDown(p, tested) : stepUp(p, tested, method);
-}
-
-/** Positions of all p that are not NaN, smallest p first. */
-function ascendingOrder(p: Float64Array): Uint32Array {
-  return Uint32Array.from(p.keys()).filter((i) => !Number.isNaN(p[i])).sort((a, b) => p[a] - p[b]);
+  const ascending = p.filter((value) => !Number.isNaN(value)).sort();
+  const count = ascending.length;
+  if (method === "bonferroni") return p.map((value) => Math.min(1, value * count));
+  if (method === "holm") {
+    const adjusted = stepDown(ascending);
+    return p.map((value) => Number.isNaN(value) ? NaN : adjusted[lowerBound(ascending, value)]);
+  }
+  const adjusted = stepUp(ascending, method === "by" ? harmonicSum(count) : 1);
+  return p.map((value) => Number.isNaN(value) ? NaN : adjusted[upperBound(ascending, value) - 1]);
 }
 
 /** Holm: the smallest of m counts m times, the next m - 1 times, and none less than the one before. */
-function stepDown(p: Float64Array, ascending: Uint32Array): Float64Array {
-  const adjusted = new Float64Array(p.length).fill(NaN);
+function stepDown(ascending: Float64Array): Float64Array {
   let largest = 0;
-  ascending.forEach((position, rank) => {
-    largest = Math.max(largest, Math.min(1, (ascending.length - rank) * p[position]));
-    adjusted[position] = largest;
+  return ascending.map((p, rank) => {
+    largest = Math.max(largest, Math.min(1, (ascending.length - rank) * p));
+    return largest;
   });
-  return adjusted;
 }
 
 /** Benjamini and coauthors: from the largest p down, m / rank times p, and none more than the one after. */
-function stepUp(p: Float64Array, ascending: Uint32Array, method: "bh" | "by"): Float64Array {
-  const adjusted = new Float64Array(p.length).fill(NaN);
-  const count = ascending.length;
-  let dependence = 1;
-  if (method === "by") { for (let k = 2; k <= count; k++) dependence += 1 / k; }
+function stepUp(ascending: Float64Array, dependence: number): Float64Array {
+  const adjusted = new Float64Array(ascending.length);
   let smallest = 1;
-  for (let rank = count; rank >= 1; rank--) {
-    const position = ascending[rank - 1];
-    smallest = Math.min(smallest, dependence * count / rank * p[position]);
-    adjusted[position] = smallest;
+  for (let rank = ascending.length; rank >= 1; rank--) {
+    smallest = Math.min(smallest, dependence * ascending.length / rank * ascending[rank - 1]);
+    adjusted[rank - 1] = smallest;
   }
   return adjusted;
+}
+
+/** 1 + 1/2 + … + 1/count. */
+function harmonicSum(count: number): number {
+  let sum = 0;
+  for (let k = 1; k <= count; k++) sum += 1 / k;
+  return sum;
 }

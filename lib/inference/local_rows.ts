@@ -30,46 +30,72 @@ export function sortRows(
   weights: Weights,
   { permutations, areas }: { permutations: number; areas?: Uint32Array },
 ): LocalRows {
-  const n = weights.offsets.length - 1;
-  const rows = { subsets: [], arrangements: [], ranked: [], weighed: [] } as Record<
-    keyof LocalRows,
-    number[]
-  >;
-  for (const area of areas ?? Uint32Array.from({ length: n }, (_, i) => i)) {
-    const row = rowOf(weights, area);
-    if (row.length === 0) continue;
-    const equal = row[0] > 0 && row.every((weight) => weight === row[0]);
-    if (equal) {
-      rows[subsetsOf(n - 1, row.length) < permutations ? "subsets" : "ranked"].push(area);
-    } else {
-      const few = Math.min(permutations - 1, MOST_ARRANGEMENTS);
-      rows[arrangementsOf(n - 1, row.length) <= few ? "arrangements" : "weighed"].push(area);
-    }
+  const others = weights.offsets.length - 2;
+  const asked = areas ?? Uint32Array.from({ length: others + 1 }, (_, i) => i);
+  const fewSubsets = remember((k) => subsetsOf(others, k) < permutations);
+  const fewArrangements = remember((k) =>
+    arrangementsOf(others, k) <= Math.min(permutations - 1, MOST_ARRANGEMENTS)
+  );
+  const ways = new Uint8Array(asked.length);
+  for (let a = 0; a < asked.length; a++) {
+    const neighbors = weights.offsets[asked[a] + 1] - weights.offsets[asked[a]];
+    if (neighbors === 0) ways[a] = ALONE;
+    else if (isEqualRow(weights, asked[a])) ways[a] = fewSubsets(neighbors) ? SUBSETS : RANKED;
+    else ways[a] = fewArrangements(neighbors) ? ARRANGEMENTS : WEIGHED;
   }
+  const withWay = (way: number) => asked.filter((_, a) => ways[a] === way);
   return {
-    subsets: Uint32Array.from(rows.subsets),
-    arrangements: Uint32Array.from(rows.arrangements),
-    ranked: Uint32Array.from(rows.ranked),
-    weighed: Uint32Array.from(rows.weighed),
+    subsets: withWay(SUBSETS),
+    arrangements: withWay(ARRANGEMENTS),
+    ranked: withWay(RANKED),
+    weighed: withWay(WEIGHED),
   };
 }
 
-/** Weights of an area's row scaled so that the largest in size is 1; on this scale ties are judged. */
-export function scaledRow(weights: Weights, area: number): Float64Array {
-  const row = rowOf(weights, area);
-  const largest = row.reduce((max, weight) => Math.max(max, Math.abs(weight)), 0);
-  return row.map((weight) => weight / largest);
+const ALONE = 0, SUBSETS = 1, ARRANGEMENTS = 2, RANKED = 3, WEIGHED = 4;
+
+/** A question about a number of neighbors that is worked out once for each. */
+function remember(ask: (k: number) => boolean): (k: number) => boolean {
+  const answers = new Map<number, boolean>();
+  return (k) => {
+    const known = answers.get(k) ?? ask(k);
+    answers.set(k, known);
+    return known;
+  };
 }
 
-/** Sum of the neighbors' scores under scaled weights. */
-export function scaledSum(weights: Weights, area: number, z: Float64Array): number {
-  const first = weights.offsets[area];
-  return scaledRow(weights, area).reduce(
-    (sum, weight, m) => sum + weight * z[weights.indices[first + m]],
-    0,
-  );
+function isEqualRow({ offsets, values }: Weights, area: number): boolean {
+  const first = values[offsets[area]];
+  if (!(first > 0)) return false;
+  for (let e = offsets[area] + 1; e < offsets[area + 1]; e++) if (values[e] !== first) return false;
+  return true;
 }
 
-function rowOf({ offsets, values }: Weights, area: number): Float64Array {
-  return values.subarray(offsets[area], offsets[area + 1]);
+/** Weights of some areas' rows, one after the other, each scaled so that its largest in size is 1. */
+export interface ScaledRows {
+  /** Where each row begins in `weights`; one more than rows. */
+  readonly offsets: Uint32Array;
+  readonly weights: Float64Array;
+  /** Sum of the neighbors' scores under the scaled weights, for each row; on this scale ties are judged. */
+  readonly observed: Float64Array;
+}
+
+/** Scales the rows of `areas`; `z` are the standard scores. Cost: two passes over their links. */
+export function scaleRows(weights: Weights, areas: Uint32Array, z: Float64Array): ScaledRows {
+  const offsets = new Uint32Array(areas.length + 1);
+  for (let a = 0; a < areas.length; a++) {
+    offsets[a + 1] = offsets[a] + weights.offsets[areas[a] + 1] - weights.offsets[areas[a]];
+  }
+  const scaled = new Float64Array(offsets[areas.length]), observed = new Float64Array(areas.length);
+  for (let a = 0; a < areas.length; a++) {
+    const first = weights.offsets[areas[a]], end = weights.offsets[areas[a] + 1];
+    let largest = 0, sum = 0;
+    for (let e = first; e < end; e++) largest = Math.max(largest, Math.abs(weights.values[e]));
+    for (let e = first, at = offsets[a]; e < end; e++, at++) {
+      scaled[at] = weights.values[e] / largest;
+      sum += scaled[at] * z[weights.indices[e]];
+    }
+    observed[a] = sum;
+  }
+  return { offsets, weights: scaled, observed };
 }

@@ -5,9 +5,10 @@
  * @module
  */
 import type { Weights } from "../weights/weights.ts";
-import { countArrangements } from "./arrangement_counts.ts";
+import { arrangementsOf, countArrangements } from "./arrangement_counts.ts";
 import { BLOCK } from "./dealer.ts";
-import { type LocalRows, scaledRow, scaledSum, sortRows } from "./local_rows.ts";
+import { gather } from "./gather.ts";
+import { type LocalRows, scaleRows, sortRows } from "./local_rows.ts";
 import type { PermuteOptions } from "./options.ts";
 import { orderAreas } from "./order_areas.ts";
 import type { RankedJob } from "./ranked_job.ts";
@@ -79,35 +80,30 @@ interface Task {
 function enumerateSubsets(counts: SumCounts, task: Task & { areas: Uint32Array }): void {
   const { z, weights, areas } = task;
   if (areas.length === 0) return;
-  const neighborsOf = (area: number) => weights.offsets[area + 1] - weights.offsets[area];
-  const largest = areas.reduce(
-    (max, area) => Math.max(max, smallerSide(z.length, neighborsOf(area))),
-    0,
-  );
+  const { offsets, observed } = scaleRows(weights, areas, z);
+  const neighbors = areas.map((_, a) => offsets[a + 1] - offsets[a]);
+  const largest = neighbors.reduce((max, k) => Math.max(max, smallerSide(z.length, k)), 0);
   const counter = createSubsetCounter(z, largest);
-  for (const area of areas) {
-    const k = neighborsOf(area);
+  areas.forEach((area, a) =>
     record(counts, area, {
-      ...counter.count(area, k, scaledSum(weights, area, z)),
-      permutations: subsetsOf(z.length - 1, k),
+      ...counter.count(area, neighbors[a], observed[a]),
+      permutations: subsetsOf(z.length - 1, neighbors[a]),
       enumerated: true,
-    });
-  }
+    })
+  );
 }
 
 function enumerateArrangements(counts: SumCounts, task: Task & { areas: Uint32Array }): void {
   const { z, weights, areas } = task;
-  for (const area of areas) {
-    const row = scaledRow(weights, area);
-    const found = countArrangements(z, {
-      area,
-      weights: row,
-      observed: scaledSum(weights, area, z),
+  const rows = scaleRows(weights, areas, z);
+  areas.forEach((area, a) => {
+    const row = rows.weights.subarray(rows.offsets[a], rows.offsets[a + 1]);
+    record(counts, area, {
+      ...countArrangements(z, { area, weights: row, observed: rows.observed[a] }),
+      permutations: arrangementsOf(z.length - 1, row.length),
+      enumerated: true,
     });
-    let permutations = 1;
-    for (let m = 0; m < row.length; m++) permutations *= z.length - 1 - m;
-    record(counts, area, { ...found, permutations, enumerated: true });
-  }
+  });
 }
 
 type Sampling = Task & { seed: Seed; rows: LocalRows; options: SumOptions };
@@ -115,28 +111,30 @@ type Sampling = Task & { seed: Seed; rows: LocalRows; options: SumOptions };
 async function sampleRanked(counts: SumCounts, sampling: Sampling): Promise<void> {
   const { z, weights, seed, rows, options } = sampling;
   if (rows.ranked.length === 0) return;
-  const { order, degrees, starts } = orderAreas(
-    rows.ranked,
-    rows.ranked.map((area) => weights.offsets[area + 1] - weights.offsets[area]),
-    Float64Array.from(rows.ranked, (area) => scaledSum(weights, area, z)),
+  const { offsets, observed } = scaleRows(weights, rows.ranked, z);
+  const { places, degrees, starts } = orderAreas(
+    rows.ranked.map((_, a) => offsets[a + 1] - offsets[a]),
+    observed,
   );
+  const order = gather(rows.ranked, places);
   const job: RankedJob = {
     kind: "ranked",
     seed,
     permutations: options.permutations,
     z: testedFirst(z, order),
-    observed: Float64Array.from(order, (area) => scaledSum(weights, area, z)),
+    observed: gather(observed, places),
     degrees,
     starts,
   };
   const parts = await runJob(job, options);
-  for (let a = 0; a < rows.ranked.length; a++) {
-    let atLeast = 0, atMost = 0;
+  for (let a = 0; a < order.length; a++) {
+    const area = order[a];
+    // A worker's share may lie below 0 (areas that drew themselves are corrected); the sum wraps around to its count.
     for (const part of parts) {
-      atLeast += part.atLeast[a] | 0; // a worker's share may be below 0: see replaceItself
-      atMost += part.atMost[a] | 0;
+      counts.atLeast[area] += part.atLeast[a];
+      counts.atMost[area] += part.atMost[a];
     }
-    record(counts, order[a], { atLeast, atMost, permutations: options.permutations });
+    counts.permutations[area] = options.permutations;
   }
 }
 
@@ -144,10 +142,10 @@ async function sampleRanked(counts: SumCounts, sampling: Sampling): Promise<void
 function testedFirst(z: Float64Array, order: Uint32Array): Float64Array {
   const arranged = new Float64Array(z.length);
   const isTested = new Uint8Array(z.length);
-  order.forEach((area, place) => {
-    arranged[place] = z[area];
-    isTested[area] = 1;
-  });
+  for (let place = 0; place < order.length; place++) {
+    arranged[place] = z[order[place]];
+    isTested[order[place]] = 1;
+  }
   let next = order.length;
   for (let area = 0; area < z.length; area++) if (!isTested[area]) arranged[next++] = z[area];
   return arranged;
@@ -176,12 +174,6 @@ type Weighing = Sampling & { areas: Uint32Array; from: number; to: number; stopp
 async function weigh(counts: SumCounts, weighing: Weighing): Promise<void> {
   const { z, weights, seed, areas, from, to, stopping, options } = weighing;
   if (areas.length === 0) return;
-  const offsets = new Uint32Array(areas.length + 1);
-  areas.forEach((area, a) => {
-    offsets[a + 1] = offsets[a] + weights.offsets[area + 1] - weights.offsets[area];
-  });
-  const scaled = new Float64Array(offsets[areas.length]);
-  areas.forEach((area, a) => scaled.set(scaledRow(weights, area), offsets[a]));
   const job: WeighedJob = {
     kind: "weighed",
     seed,
@@ -190,11 +182,9 @@ async function weigh(counts: SumCounts, weighing: Weighing): Promise<void> {
     stopping,
     z,
     areas,
-    offsets,
-    weights: scaled,
-    observed: Float64Array.from(areas, (area) => scaledSum(weights, area, z)),
-    atLeast: Uint32Array.from(areas, (area) => counts.atLeast[area]),
-    atMost: Uint32Array.from(areas, (area) => counts.atMost[area]),
+    ...scaleRows(weights, areas, z),
+    atLeast: gather(counts.atLeast, areas),
+    atMost: gather(counts.atMost, areas),
   };
   for (const part of (await runJob(job, options)).flat()) {
     part.drawn.forEach((permutations, a) =>

@@ -3,28 +3,22 @@
  *
  * @module
  */
-import { gather } from "./gather.ts";
 
 /** Areas in a new order, grouped by their number of neighbors. */
 export interface AreaOrder {
-  /** Positions of the areas, fewest neighbors first, and among equals ascending by observed value. */
-  readonly order: Uint32Array;
+  /** Places of the areas, fewest neighbors first, and among equals ascending by observed value. */
+  readonly places: Uint32Array;
   /** The distinct neighbor counts, ascending. */
   readonly degrees: Uint32Array;
-  /** Where each count begins in `order`; one more than counts. */
+  /** Where each count begins in `places`; one more than counts. */
   readonly starts: Uint32Array;
 }
 
 /**
- * Orders areas by number of neighbors and then by observed value. `areas`, `degrees` and `observed` are
- * parallel. Values are told apart to a part in a million: the order only has to make neighbors in it close.
+ * Orders areas by number of neighbors (`degrees`) and then by observed value; the two are parallel. Values are told apart to a part in a million: the order only has to make neighbors in it close.
  * Cost: three passes over the areas and over 65,536 counters.
  */
-export function orderAreas(
-  areas: Uint32Array,
-  degrees: Uint32Array,
-  observed: Float64Array,
-): AreaOrder {
+export function orderAreas(degrees: Uint32Array, observed: Float64Array): AreaOrder {
   const keys = upperHalves(observed);
   const byLow = stableOrder(null, keys.map((key) => key & 0xffff));
   const byValue = stableOrder(byLow, keys.map((key) => key >>> 16));
@@ -37,9 +31,9 @@ export function orderAreas(
     starts.push(at);
   }
   return {
-    order: gather(areas, places),
+    places,
     degrees: Uint32Array.from(found),
-    starts: Uint32Array.of(...starts, areas.length),
+    starts: Uint32Array.of(...starts, places.length),
   };
 }
 

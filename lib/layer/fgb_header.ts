@@ -13,6 +13,7 @@ import { Crs } from "flatgeobuf/lib/mjs/flat-geobuf/crs.js";
 import { Header } from "flatgeobuf/lib/mjs/flat-geobuf/header.js";
 import { calcTreeSize } from "flatgeobuf/lib/mjs/packedrtree.js";
 import { viewOf } from "./flat_table.ts";
+import type { Crs as LayerCrs } from "./layer.ts";
 
 /** Column types of the format, by number. */
 export const FGB_TYPES = {
@@ -104,6 +105,20 @@ const MAGIC = [0x66, 0x67, 0x62, 0x03, 0x66, 0x67, 0x62, 0x01] as const;
 /** Whether bytes start like a FlatGeobuf file of the version read here. */
 export function looksLikeFgb(bytes: Uint8Array): boolean {
   return bytes.length > 12 && MAGIC.slice(0, 7).every((byte, i) => bytes[i] === byte);
+}
+
+/** A reference system as the format stores it. */
+export function fgbCrs({ name, code, wkt }: LayerCrs): FgbCrs {
+  const [org, number] = code?.split(":") ?? [];
+  const numeric = /^[0-9]+$/.test(number ?? "");
+  return {
+    org: org ?? null,
+    code: numeric ? Number(number) : 0,
+    name,
+    description: null,
+    wkt,
+    codeString: numeric ? null : number ?? null,
+  };
 }
 
 /** Reads the header. @returns also where features begin, past any spatial index. */

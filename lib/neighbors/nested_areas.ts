@@ -53,7 +53,7 @@ export function nestedAreas(
       return false;
     });
     for (const [outer, count] of crossings) {
-      if (count > 0 && outer !== areaOf[v]) nested.push({ inner: areaOf[v], outer });
+      if (count % 2 === 1 && outer !== areaOf[v]) nested.push({ inner: areaOf[v], outer });
     }
   }
   return nested;

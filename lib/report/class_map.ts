@@ -29,6 +29,8 @@ const FULL_WIDTH = 1080;
 const WIDE_RATIO = 1.3;
 const LEGEND_COLUMNS = 3;
 const GAP = 36;
+/** Around the map, so that marks and outlines at its border are whole. */
+const MARGIN = 8;
 
 /**
  * Draws the map with legend and scale bar. Up to 3,000 areas each carries a tooltip; areas of larger layers are
@@ -49,20 +51,20 @@ export function classMap(input: ReportInput): Markup | null {
   return svgFigure(
     { label: describe(input), width: layout.width, height: layout.height },
     hatchPatterns(MAP_NAME, sizes.tile),
-    markup`<g transform="translate(1 1) scale(${scale})">
+    markup`<g transform="translate(${MARGIN} ${MARGIN}) scale(${scale})">
 ${groups.map((group) => drawGroup(input, group, { frame, sizes }))}</g>
 `,
     markup`<g transform="translate(${layout.legendLeft} ${layout.legendTop})">${
       drawLegend(entries, { columns: layout.columns, kind, sizes })
     }</g>`,
-    scaleBar(frame.metersPerUnit, { left: 2, top: layout.barTop, mapWidth: frame.width }),
+    scaleBar(frame.metersPerUnit, { left: MARGIN, top: layout.barTop, mapWidth: frame.width }),
   );
 }
 
 function mapRoom(ratio: number): MapRoom {
   return ratio >= WIDE_RATIO
-    ? { width: FULL_WIDTH, height: 760 }
-    : { width: FULL_WIDTH - GAP - LEGEND_ROW.width, height: 820 };
+    ? { width: FULL_WIDTH - 2 * MARGIN, height: 760 }
+    : { width: FULL_WIDTH - 2 * MARGIN - GAP - LEGEND_ROW.width, height: 820 };
 }
 
 interface Layout {
@@ -75,7 +77,7 @@ interface Layout {
 }
 
 function layOut(frame: MapFrame, entries: readonly LegendEntry[]): Layout {
-  const barTop = Math.round(frame.height) + 20;
+  const barTop = Math.round(frame.height) + 2 * MARGIN + 14;
   const below = barTop + 18;
   if (frame.width / frame.height >= WIDE_RATIO) {
     const rows = Math.ceil(entries.length / LEGEND_COLUMNS);
@@ -83,18 +85,18 @@ function layOut(frame: MapFrame, entries: readonly LegendEntry[]): Layout {
       width: FULL_WIDTH,
       height: below + 10 + rows * LEGEND_ROW.height,
       columns: LEGEND_COLUMNS,
-      legendLeft: 1,
+      legendLeft: MARGIN,
       legendTop: below + 10,
       barTop,
     };
   }
-  const legendLeft = Math.round(frame.width) + GAP;
+  const legendLeft = Math.round(frame.width) + 2 * MARGIN + GAP;
   return {
     width: legendLeft + LEGEND_ROW.width,
     height: Math.max(below, entries.length * LEGEND_ROW.height),
     columns: 1,
     legendLeft,
-    legendTop: 1,
+    legendTop: MARGIN,
     barTop,
   };
 }

@@ -147,7 +147,7 @@ function polygonStyle({ name, fragile }: Omit<MapGroup, "rows">, { outline }: Ma
 
 function pointStyle({ name, fragile }: Omit<MapGroup, "rows">): Markup {
   const { ink, fill } = CLASS_LOOKS[name];
-  const inside = name === "no value" ? ink : fill;
+  const inside = isFaint(name) ? ink : fill;
   if (fragile) {
     return markup`fill="${inside}" fill-opacity="${FRAGILE_STRENGTH}" ${dashed(ink, 1.6)}`;
   }
@@ -155,10 +155,15 @@ function pointStyle({ name, fragile }: Omit<MapGroup, "rows">): Markup {
   return markup`fill="${inside}" stroke="${outline}" stroke-width="1.4"`;
 }
 
+/** Whether the fill is too light to be seen on white where it is no whole area. */
+function isFaint(name: AreaClass): boolean {
+  return name === "no evidence" || name === "no value";
+}
+
 /** Lines: solid and wide among their like, light and broken among the others. */
 function lineStyle({ name, fragile }: Omit<MapGroup, "rows">): Markup {
   const { ink, fill, hatch } = CLASS_LOOKS[name];
-  const color = fill === "#FFFFFF" ? ink : fill;
+  const color = isFlagged(name) ? fill : ink;
   const dashes = { none: null, rising: "14 6", falling: "14 6", dots: "2 6", cross: "6 6" }[hatch];
   const dash = fragile ? "7 6" : dashes;
   return markup`fill="none" stroke="${color}" stroke-width="${isFlagged(name) ? 6 : 3}"${

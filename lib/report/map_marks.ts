@@ -26,7 +26,7 @@ function formOf(name: AreaClass): readonly number[] {
     case "no value":
       return CROSS;
     case "no evidence":
-      return ROUND.map((share) => 0.7 * share);
+      return ROUND.map((share) => 0.55 * share);
     case "alone":
       return ROUND;
   }

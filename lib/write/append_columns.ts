@@ -5,8 +5,9 @@
  *
  * @module
  */
+import { crsOf } from "../layer/decode_layer.ts";
 import { UsageError } from "../layer/errors.ts";
-import { encodeFgbHeader, newFgbColumn, readFgbHeader } from "../layer/fgb_header.ts";
+import { encodeFgbHeader, fgbCrs, newFgbColumn, readFgbHeader } from "../layer/fgb_header.ts";
 import { fieldAt, follow, vectorLength, vectorStart, viewOf } from "../layer/flat_table.ts";
 import { boundsOf } from "../layer/geometry.ts";
 import type { ColumnValues, Layer } from "../layer/layer.ts";
@@ -47,6 +48,8 @@ export function appendColumns(layer: Layer, columns: readonly ColumnValues[]): U
   const encoders = columns.map((column, i) => propertyEncoder(column, header.columns.length + i));
   const head = encodeFgbHeader({
     ...header,
+    // A file that declares none, or "unknown", may have been given one by the caller.
+    crs: layer.crs && !crsOf(header.crs) ? fgbCrs(layer.crs) : header.crs,
     envelope: header.envelope ?? boundsOf(layer.geometry),
     columns: [
       ...header.columns,

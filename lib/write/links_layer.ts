@@ -3,7 +3,7 @@
  *
  * @module
  */
-import { encodeFgbHeader, type FgbCrs, newFgbColumn } from "../layer/fgb_header.ts";
+import { encodeFgbHeader, fgbCrs, newFgbColumn } from "../layer/fgb_header.ts";
 import { viewOf } from "../layer/flat_table.ts";
 import { type FlatGeometry, GEOMETRY_KINDS } from "../layer/geometry.ts";
 import type { ColumnValues, Crs } from "../layer/layer.ts";
@@ -117,19 +117,6 @@ function writeBlock(view: DataView, at: number, xy: Float64Array, first: number)
   view.setUint32(at + BLOCK.table + 4, BLOCK.vector - (BLOCK.table + 4), true);
   view.setUint32(at + BLOCK.vector, 4, true);
   for (let k = 0; k < 4; k++) view.setFloat64(at + BLOCK.xy + 8 * k, xy[first + k], true);
-}
-
-function fgbCrs({ name, code, wkt }: Crs): FgbCrs {
-  const [org, number] = code?.split(":") ?? [];
-  const numeric = /^[0-9]+$/.test(number ?? "");
-  return {
-    org: org ?? null,
-    code: numeric ? Number(number) : 0,
-    name,
-    description: null,
-    wkt,
-    codeString: numeric ? null : number ?? null,
-  };
 }
 
 /** One part of two vertices a link; none where either end has no point. */

@@ -1,6 +1,8 @@
 /** The main job on open data, against values computed outside the project. */
 import assert from "node:assert/strict";
 import { assess } from "../../lib/assess/assess.ts";
+import { writeAssessment } from "../../lib/assess/write_assessment.ts";
+import { readLayer } from "../../lib/read/vector.ts";
 import { assertClose } from "../support/close.ts";
 import { gridLayer } from "../support/grid_layer.ts";
 import { numberColumn, referenceCase, textColumn } from "../support/reference.ts";
@@ -148,4 +150,16 @@ Deno.test("assess() stops when its signal is aborted", () =>
   onGrid(async (path) => {
     const signal = AbortSignal.abort();
     await assert.rejects(assess(path, { value: "rate", signal }), { name: "AbortError" });
+  }));
+
+Deno.test("assess() hands a CRS that the caller gave on to the written layer", () =>
+  withFolder(async (folder) => {
+    const rows = Array.from({ length: 12 }, (_, at) => `${at % 4},${at % 3},${at}`);
+    await Deno.writeTextFile(`${folder}/places.csv`, ["x,y,n", ...rows].join("\n"));
+    const assessment = await assess(`${folder}/places.csv`, {
+      ...{ value: "n", crs: "EPSG:25832", neighbors: "nearest:3", sweep: false },
+    });
+    await writeAssessment(assessment, `${folder}/out`);
+    const { crs } = await readLayer(`${folder}/out/areas.fgb`);
+    assert.equal(crs?.code, "EPSG:25832");
   }));

@@ -30,6 +30,17 @@ Deno.test("vertexIds() agrees with comparing all vertices, chains of near ones i
   }
 });
 
+Deno.test("vertexIds() joins near vertices across every border of its cells, in both orders", () => {
+  // Pairs 0.9 tolerances apart, moved by 0.8 of a tolerance over more than two cells: whatever the borders are,
+  // pairs lie across them.
+  for (let step = 0; step < 3000; step++) {
+    const [low, high] = [step * 0.8, step * 0.8 + 0.9];
+    for (const xy of [[low, 0, high, 0], [high, 0, low, 0], [0, low, 0, high], [0, high, 0, low]]) {
+      assert.equal(vertexIds(Float64Array.from(xy), 1).count, 1, `step ${step}`);
+    }
+  }
+});
+
 Deno.test("vertexIds() takes 0 and -0 as one place, and gives exact places when nothing is near", () => {
   const { ids, exactIds, count } = vertexIds(Float64Array.from([0, 1, -0, 1, 5, 5]), 1e-9);
   assert.deepEqual([...ids], [0, 0, 1]);
