@@ -9,6 +9,7 @@ import { VERSION } from "../lib/layer/version.ts";
 import { EXIT, exitCodeOf } from "./exit_codes.ts";
 import { type CommandRow, COMMANDS, type OptionRow } from "./option_table.ts";
 import type { OptionValues } from "./option_values.ts";
+import { complain } from "./terminal.ts";
 
 /** What a file in `commands/` exports. */
 export interface CommandModule {
@@ -76,16 +77,14 @@ function addOption(command: Command, option: OptionRow): void {
 function report(error: unknown): number {
   if (error instanceof CommanderError) {
     if (error.exitCode === 0) return EXIT.done;
-    process.stderr.write(`nearkin: ${usageText(error)}\n`);
+    complain(usageText(error));
     return EXIT.usage;
   }
   const code = exitCodeOf(error);
   const { message, stack } = error instanceof Error ? error : new Error(String(error));
-  if (code === EXIT.interrupted) {
-    process.stderr.write("nearkin: interrupted, nothing was written\n");
-  } else if (code === EXIT.faultOfTheProgram) {
-    process.stderr.write(`nearkin: a fault of the program\n${stack}\n`);
-  } else process.stderr.write(`nearkin: ${message}\n`);
+  if (code === EXIT.interrupted) complain("interrupted, nothing was written");
+  else if (code === EXIT.faultOfTheProgram) complain(`a fault of the program\n${stack}`);
+  else complain(message);
   return code;
 }
 

@@ -104,7 +104,31 @@ export const COMMANDS: readonly CommandRow[] = [
         flag: "value",
         argument: "FIELD",
         text: "The number to test, one per area (a field of the layer or of the joined table)",
-        required: true,
+        default: "required, unless --rate is given",
+      },
+      {
+        flag: "rate",
+        argument: "CASES/POPULATION",
+        text: "Test a rate instead: two fields, tested as standardized rates",
+      },
+      {
+        flag: "per",
+        argument: "N",
+        text: "Show rates per so many of the population",
+        default: "1000",
+      },
+      {
+        flag: "name",
+        argument: "NAME",
+        text: "Name of a rate and of its result fields",
+        default: "CASES_rate",
+      },
+      {
+        flag: "transform",
+        argument: "HOW",
+        text:
+          "Transform before testing: none, log, log1p, sqrt, rank or normal-scores; with --rate freeman-tukey",
+        default: "none; standardized rates with --rate",
       },
       {
         flag: "out",

@@ -34,7 +34,7 @@ export function summaryText(
   ].join("\n");
 }
 
-function keyLines({ layer, sweep }: Results, { neighbors, global, local }: Run): string[] {
+function keyLines({ layer, sweep }: Results, { neighbors, global, local, rate }: Run): string[] {
   const { moranI } = global;
   const lines = [
     `Areas      ${layer.used} of ${layer.features} used${leftOutText(layer.leftOut)}`,
@@ -48,6 +48,7 @@ function keyLines({ layer, sweep }: Results, { neighbors, global, local }: Run):
       classText(local.counts)
     }`,
   ];
+  if (rate) lines.push(wrapped(rateLine(rate, local.level), "           "));
   if (sweep) {
     const { joint, stability } = sweep;
     lines.push(
@@ -59,6 +60,16 @@ function keyLines({ layer, sweep }: Results, { neighbors, global, local }: Run):
     );
   }
   return lines;
+}
+
+function rateLine(rate: NonNullable<Run["rate"]>, level: number): string {
+  const { overdispersion, constantRisk, funnel } = rate;
+  const isVaried = overdispersion.p !== null && overdispersion.p <= level;
+  return `Rates      ${shortNumber(rate.overall)} per ${rate.per} overall, ${
+    isVaried ? "more" : "not more"
+  } variable than chance (p ${pText(overdispersion.p)}); I at one risk for all p ${
+    pText(constantRisk.p)
+  }; ${funnel["above 99.8"]} areas above and ${funnel["below 99.8"]} below the 99.8 % limits`;
 }
 
 function leftOutText(leftOut: Results["layer"]["leftOut"]): string {

@@ -9,12 +9,14 @@ import process from "node:process";
 const QUIET_START = 1000;
 /** How often the line is redrawn at most, in milliseconds. */
 const REDRAW = 100;
+/** Back to the start of the line, which is emptied. */
+const WIPE = "\r\x1b[2K";
 
 /** Where a command prints. */
 export interface Terminal {
   /** Writes a line to stdout. */
   print(text: string): void;
-  /** Writes a line to stderr. */
+  /** Writes a line to stderr that is no error; nothing where quiet. */
   say(text: string): void;
   /** Shows how far a stage is, on a terminal and after a second only; `share` from 0 to 1. */
   progress(stage: string, share?: number): void;
@@ -31,7 +33,7 @@ export function processTerminal(options: { quiet?: boolean } = {}): Terminal {
   const color = Boolean(process.stdout.isTTY) && !process.env.NO_COLOR;
   let drawn = 0, shown = false;
   const clear = () => {
-    if (shown) process.stderr.write("\r\x1b[2K");
+    if (shown) process.stderr.write(WIPE);
     shown = false;
   };
   return {
@@ -41,18 +43,23 @@ export function processTerminal(options: { quiet?: boolean } = {}): Terminal {
     },
     say: (text) => {
       clear();
-      process.stderr.write(text + "\n");
+      if (!options.quiet) process.stderr.write(text + "\n");
     },
     progress: (stage, share) => {
       const now = performance.now();
       if (!live || now - started < QUIET_START || now - drawn < REDRAW) return;
       drawn = now;
       shown = true;
-      process.stderr.write(`\r\x1b[2K${stage}${share === undefined ? "" : ` ${percent(share)}`}`);
+      process.stderr.write(`${WIPE}${stage}${share === undefined ? "" : ` ${percent(share)}`}`);
     },
     clear,
     bold: (text) => color ? `\x1b[1m${text}\x1b[22m` : text,
   };
+}
+
+/** Writes an error to stderr, over the progress that may stand there. */
+export function complain(text: string): void {
+  process.stderr.write(`${process.stderr.isTTY ? WIPE : ""}nearkin: ${text}\n`);
 }
 
 function percent(share: number): string {

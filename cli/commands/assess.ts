@@ -47,6 +47,7 @@ export function assessOptions(values: OptionValues): AssessOptions {
   const text = values as Readonly<Record<string, string | undefined>>;
   return {
     ...text,
+    per: numberOf("--per", text.per),
     permutations: numberOf("--permutations", text.permutations),
     localPermutations: numberOf("--local-permutations", text.localPermutations),
     level: numberOf("--level", text.level),

@@ -26,8 +26,7 @@ function inspectionLines(found: Inspection, { bold }: Terminal): string[] {
     "",
     ...fieldLines(found.fields),
     "",
-    "Try:",
-    `  ${found.suggestion}`,
+    ...suggestionLines(found),
   ];
 }
 
@@ -58,7 +57,9 @@ function otherLayers({ layers, layer }: Inspection): string[] {
 }
 
 function distanceLines({ distances }: Inspection): string[] {
-  if (!distances) return ["Distances  none measured (no CRS, or fewer than two areas)"];
+  if (!distances) {
+    return ["Distances  none measured (fewer than two areas, or no CRS fits the extent)"];
+  }
   const { noneAlone, oneComponent, unit } = distances;
   return [
     `Distances  within ${lengthText(noneAlone, unit)} no area is alone; ` +
@@ -91,4 +92,9 @@ function fieldLines(fields: readonly FieldSummary[]): string[] {
 function shown(value: number | string): string {
   const text = String(value);
   return text.length > 24 ? `${text.slice(0, 23)}…` : text;
+}
+
+function suggestionLines({ suggestion }: Inspection): string[] {
+  if (suggestion !== null) return ["Try:", `  ${suggestion}`];
+  return ["These rows have no geometry; join them, as CSV or XLSX, to a layer with assess --join"];
 }

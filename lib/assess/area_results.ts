@@ -5,7 +5,9 @@
  */
 import type { LocalMoran } from "../statistics/local_moran.ts";
 import type { Quadrant } from "../statistics/quadrant.ts";
+import type { AreaRates } from "../write/rate_results.ts";
 import type { AreaClass, AreaResults, Steadiness } from "../write/results.ts";
+import { spread, spreadNumbers } from "./spread.ts";
 
 /** What was found for the used areas; arrays are parallel to `used`. */
 export interface LocalFindings {
@@ -23,10 +25,12 @@ export interface AreaRows {
   readonly prefix: string;
   /** Rows that were used, ascending. */
   readonly used: Uint32Array;
-  /** Value of every row, NaN where missing. */
+  /** Value of every row as it is shown, NaN where missing. */
   readonly values: Float64Array;
   /** Reason of every row that was left out or not tested, else null. */
   readonly leftOut: readonly (string | null)[];
+  /** Null where the indicator is no rate. */
+  readonly rates: AreaRates | null;
 }
 
 const CLASS_OF: Readonly<Record<Quadrant, AreaClass>> = {
@@ -41,7 +45,8 @@ export function areaResults(rows: AreaRows, found: LocalFindings): AreaResults {
   const { used, leftOut } = rows;
   const { local } = found;
   const numbers = (values: Float64Array) => spreadNumbers(values, used, leftOut.length);
-  const texts = <T>(values: ArrayLike<T>, fill: T) => spread(values, used, leftOut.length, fill);
+  const texts = <T>(values: ArrayLike<T>, fill: T) =>
+    spread(values, { used, count: leftOut.length, fill });
   const tested = (at: number) => !Number.isNaN(found.p[at]);
   const alone = (at: number) => Number.isNaN(local.i[at]);
   const classes = Array.from(used, (row, at): AreaClass => {
@@ -64,6 +69,7 @@ export function areaResults(rows: AreaRows, found: LocalFindings): AreaResults {
     sig: texts(Array.from(used, (_, at) => tested(at) ? found.sig[at] === 1 : null), null),
     agree: found.agree && numbers(found.agree),
     steady: found.steady && texts<Steadiness | null>(found.steady, null),
+    rates: rows.rates,
   };
 }
 
@@ -72,16 +78,4 @@ export function classCounts(classes: readonly AreaClass[]): Record<string, numbe
   const counts: Record<string, number> = {};
   for (const name of classes) counts[name] = (counts[name] ?? 0) + 1;
   return counts;
-}
-
-function spreadNumbers(values: Float64Array, used: Uint32Array, count: number): Float64Array {
-  const all = new Float64Array(count).fill(NaN);
-  used.forEach((row, at) => all[row] = values[at]);
-  return all;
-}
-
-function spread<T>(values: ArrayLike<T>, used: Uint32Array, count: number, fill: T): T[] {
-  const all = new Array<T>(count).fill(fill);
-  used.forEach((row, at) => all[row] = values[at]);
-  return all;
 }

@@ -16,6 +16,7 @@ import { linkTable } from "./link_table.ts";
 import type { AssessOptions, WorkOptions } from "./options.ts";
 import { type AssessPlan, planAssessment } from "./plan.ts";
 import { prepareIndicator } from "./prepare_indicator.ts";
+import { areaRates } from "./rate_results.ts";
 import { resultsOf } from "./results_of.ts";
 import { layStudy, type Study } from "./study.ts";
 import { countCutPairs, warningsOf } from "./warnings.ts";
@@ -61,6 +62,7 @@ export async function assess(path: string, options: AssessOptions): Promise<Asse
       used: indicator.used,
       values: indicator.all,
       leftOut: indicator.leftOut,
+      rates: found.rate && areaRates(found.rate, indicator.used, layer.count),
     },
     { local, ...test, agree: swept?.outcome.agree ?? null, steady: swept?.outcome.steady ?? null },
   );

@@ -16,6 +16,7 @@ import { standardDefinitions } from "../sweep/standard.ts";
 import type { BuiltDefinition } from "./build_definitions.ts";
 import type { WorkOptions } from "./options.ts";
 import type { AssessPlan } from "./plan.ts";
+import { type RateFindings, rateFindings } from "./rate_findings.ts";
 import type { Study } from "./study.ts";
 
 /** What the main definition says, and the others where they were tried. */
@@ -25,6 +26,8 @@ export interface Findings {
   readonly local: LocalMoran;
   readonly test: LocalTest;
   readonly swept: Swept | null;
+  /** Null where the indicator is no rate. */
+  readonly rate: RateFindings | null;
 }
 
 /** A sweep and the sentences on what could not be tried. */
@@ -50,7 +53,8 @@ export async function findingsOf(study: Study, options: WorkOptions): Promise<Fi
   // A sweep permutes the map for the main definition too, with the same streams.
   const reference = swept?.outcome.mainReference ??
     (await permuteMoran(values, [main.weights], { ...work, permutations: plan.permutations }))[0];
-  return { moran: moranI(values, main.weights), reference, local, test, swept };
+  const rate = await rateFindings(study, options);
+  return { moran: moranI(values, main.weights), reference, local, test, swept, rate };
 }
 
 async function trySweep(

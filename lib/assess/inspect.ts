@@ -37,7 +37,7 @@ export interface Inspection {
   readonly crs: string | null;
   readonly fields: readonly FieldSummary[];
   readonly geometry: GeometryHealth;
-  /** Null where the layer has no CRS, or fewer than two areas. */
+  /** In map units where the layer has no CRS; null for fewer than two areas, or where no CRS fits the extent. */
   readonly distances: {
     /** Smallest distance at which every area has another within reach. */
     readonly noneAlone: number;
@@ -45,18 +45,21 @@ export interface Inspection {
     readonly oneComponent: number;
     readonly unit: string;
   } | null;
-  /** An `assess` command to paste. */
-  readonly suggestion: string;
+  /** An `assess` command to paste; null for rows without geometry, which have no neighbors. */
+  readonly suggestion: string | null;
 }
 
 /**
- * Looks at one layer of a file.
+ * Looks at one layer of a file: the one asked for, else the first that has geometry, and lists the others.
  *
  * @throws What reading the layer throws. Cost: a pass over everything in the layer.
  */
 export async function inspect(path: string, options: SourceOptions = {}): Promise<Inspection> {
   const layers = isTable(path) ? [] : await listLayers(path);
-  const { layer } = await openSource(path, options);
+  const { layer } = await openSource(path, {
+    ...options,
+    layer: options.layer ?? firstWithGeometry(layers),
+  });
   const fields = layer.columns.map(({ name }) => summarizeField(layer, name));
   return {
     source: layer.source,
@@ -70,6 +73,10 @@ export async function inspect(path: string, options: SourceOptions = {}): Promis
     distances: await distancesOf(layer),
     suggestion: suggestCommand(path, layer, { fields, chosen: layers.length > 1 }),
   };
+}
+
+function firstWithGeometry(layers: readonly LayerInfo[]): string | undefined {
+  return layers.find(({ geometry, count }) => geometry !== null && count !== 0)?.name;
 }
 
 function summarizeField(layer: Layer, name: string): FieldSummary {
@@ -93,13 +100,13 @@ function summarizeField(layer: Layer, name: string): FieldSummary {
 }
 
 async function distancesOf(layer: Layer): Promise<Inspection["distances"]> {
-  if (!layer.crs) return null;
   const none = GEOMETRY_KINDS.indexOf("none");
   const kept = Uint32Array.from(layer.geometry.kinds.keys())
     .filter((row) => layer.geometry.kinds[row] !== none);
   if (kept.length < 2) return null;
   const usable = new Uint8Array(kept.length).fill(1);
-  const laid = await layGround(layer, { kept, usable }, { rules: [], names: [] });
+  const metric = layer.crs ? "auto" : "planar";
+  const laid = await layGround(layer, { kept, usable }, { rules: [], metric, names: [] });
   const { points } = definitionBuilder(laid, { standardize: "row", nameOf: String });
   if (!points || !laid.metric) return null;
   return { ...connectingDistances(points), unit: laid.metric.unit };
@@ -112,7 +119,8 @@ function suggestCommand(
   path: string,
   layer: Layer,
   { fields, chosen }: { readonly fields: readonly FieldSummary[]; readonly chosen: boolean },
-): string {
+): string | null {
+  if (layer.shape === "none") return null;
   const full = (field: FieldSummary) => field.missing === 0 && field.distinct === layer.count;
   const id = fields.find((field) => full(field) && field.kind === "text") ??
     fields.find((field) => full(field) && field.kind === "integer");

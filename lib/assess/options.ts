@@ -4,6 +4,7 @@
  * @module
  */
 import type { Adjustment } from "../inference/adjust.ts";
+import type { Transform } from "../prepare/transform.ts";
 
 /** Where a layer comes from and how to read it. */
 export interface SourceOptions {
@@ -44,10 +45,23 @@ export interface WorkOptions {
   readonly onProgress?: (stage: string, share?: number) => void;
 }
 
-/** Options of {@link assess}. */
-export interface AssessOptions extends SourceOptions, NeighborOptions, WorkOptions {
+/** What to test; exactly one of `value` and `rate`. */
+export interface IndicatorOptions {
   /** The number to test: a field of the layer or of the joined table. */
-  readonly value: string;
+  readonly value?: string;
+  /** The rate to test, `CASES/POPULATION`: two fields. */
+  readonly rate?: string;
+  /** Rates are shown per so many of the population. @default 1000 */
+  readonly per?: number;
+  /** Name of a rate and of its result fields. @default the cases field with `_rate` behind it */
+  readonly name?: string;
+  /** Transform of the values; of a rate `freeman-tukey`. @default "none", and standardized rates for a rate */
+  readonly transform?: Transform | "freeman-tukey";
+}
+
+/** Options of {@link assess}. */
+export interface AssessOptions
+  extends SourceOptions, IndicatorOptions, NeighborOptions, WorkOptions {
   /** Keep only these areas. */
   readonly where?: string;
   /** Test only these areas; the others still count as neighbors. */

@@ -9,7 +9,9 @@ import { parseRule, ruleText } from "../neighbors/rule.ts";
 import { parseVary } from "../neighbors/vary.ts";
 import { parseWeightRule, weightRuleText } from "../weights/weight_rule.ts";
 import { type Adjustment, ADJUSTMENTS } from "../inference/adjust.ts";
+import { oneOf } from "./one_of.ts";
 import type { AssessOptions, SourceOptions } from "./options.ts";
+import { type IndicatorPlan, planIndicator } from "./plan_indicator.ts";
 
 /** Fewest permutations that are accepted, and most. */
 const FEWEST = 99, MOST = 9_999_999;
@@ -18,7 +20,7 @@ const FEWEST = 99, MOST = 9_999_999;
 export interface AssessPlan {
   readonly path: string;
   readonly source: SourceOptions;
-  readonly value: string;
+  readonly indicator: IndicatorPlan;
   readonly where: string | null;
   readonly valueWhere: string | null;
   readonly join: JoinPlan | null;
@@ -62,7 +64,7 @@ export function planAssessment(path: string, options: AssessOptions): AssessPlan
   return {
     path,
     source: sourceOf(options),
-    value: options.value,
+    indicator: planIndicator(options),
     where: options.where ?? null,
     valueWhere: options.valueWhere ?? null,
     join: planJoin(options),
@@ -119,15 +121,4 @@ function permutationCount(option: string, count: number): number {
 function levelOf(level: number): number {
   if (level > 0 && level < 1) return level;
   throw new UsageError(`Cannot use --level ${level}; give a number between 0 and 1, such as 0.05`);
-}
-
-/** The word itself when it is one of `words`; a usage error that lists them otherwise. */
-export function oneOf<const Word extends string>(
-  option: string,
-  word: string,
-  words: readonly Word[],
-): Word {
-  const known = words.find((candidate) => candidate === word);
-  if (known !== undefined) return known;
-  throw new UsageError(`Cannot use ${option} ${word}; choose one of ${words.join(", ")}`);
 }

@@ -3,15 +3,18 @@
  *
  * @module
  */
-import { readColumn, readColumns } from "../layer/column.ts";
+import { readColumns } from "../layer/column.ts";
 import { UnfitDataError } from "../layer/errors.ts";
 import type { Layer } from "../layer/layer.ts";
 import { compileFilter } from "../prepare/filter.ts";
 import { filterFields } from "../prepare/filter_syntax.ts";
-import { type MissingCount, numbersOf } from "../prepare/numbers.ts";
+import type { MissingCount } from "../prepare/numbers.ts";
+import type { RateCounts } from "../prepare/rate_moments.ts";
 import { type UsableAreas, usableAreas } from "../prepare/usable.ts";
 import type { JoinReport } from "../read/join.ts";
 import type { AssessPlan } from "./plan.ts";
+import { readIndicator } from "./read_indicator.ts";
+import { testedValues } from "./tested_values.ts";
 
 /** Fewest areas with a value that can be tested at all. */
 const FEWEST_AREAS = 3;
@@ -19,12 +22,14 @@ const FEWEST_AREAS = 3;
 /** An indicator ready to be tested. */
 export interface Indicator extends UsableAreas {
   readonly name: string;
-  /** Value of every row of the layer, NaN where missing. */
+  /** Value of every row of the layer as read, or its raw rate; NaN where missing. */
   readonly all: Float64Array;
   /** Rows that have a value and may be linked, ascending. */
   readonly used: Uint32Array;
-  /** Values of the used rows. */
+  /** Tested values of the used rows. */
   readonly values: Float64Array;
+  /** Cases and population of the used rows; null where the indicator is no rate. */
+  readonly rateCounts: RateCounts | null;
   /** Mask over the used rows: 1 where the area is tested itself. */
   readonly usedTested: Uint8Array;
   readonly missing: readonly MissingCount[];
@@ -32,44 +37,39 @@ export interface Indicator extends UsableAreas {
 }
 
 /**
- * Reads the value field of a plan and sorts the areas.
+ * Reads the indicator of a plan and sorts the areas.
  *
- * @throws {UnfitDataError} when fewer than 3 areas have a value, or all values are equal.
+ * @throws {UnfitDataError} when fewer than 3 areas have a value, all values are equal, or the numbers cannot be
+ * used for what was asked.
  */
 export function prepareIndicator(
   layer: Layer,
   plan: AssessPlan,
   join: JoinReport | null,
 ): Indicator {
-  const column = readColumn(layer, plan.value);
   const where = filterOf(plan.where, layer);
-  const numbers = numbersOf(column, {
-    missing: plan.missingValues,
-    decimal: plan.decimal ?? "auto",
-    thousands: plan.thousands ?? "auto",
-    source: join?.table ?? layer.source,
-    nullKind: layer.added.includes(column) && join ? `no row in ${join.table}` : undefined,
-    where,
-  });
+  const read = readIndicator(layer, { plan, join, where });
   const areas = usableAreas({
     count: layer.count,
     kinds: layer.geometry.kinds,
-    reasons: numbers.reasons,
+    reasons: read.reasons,
     where,
     valueWhere: filterOf(plan.valueWhere, layer),
   });
   const used = areas.kept.filter((_, at) => areas.usable[at] === 1);
-  const values = Float64Array.from(used, (row) => numbers.values[row]);
+  checkAreas(used.length, layer, plan);
+  const { values, rateCounts } = testedValues(read, used, plan.indicator);
   checkValues(values, layer, plan);
   return {
     ...areas,
-    name: plan.value,
-    all: numbers.values,
+    name: plan.indicator.name,
+    all: read.shown,
     used,
     values,
+    rateCounts,
     usedTested: areas.tested.filter((_, at) => areas.usable[at] === 1),
-    missing: numbers.missing,
-    notes: numbers.notes,
+    missing: read.missing,
+    notes: read.notes,
   };
 }
 
@@ -80,19 +80,27 @@ function filterOf(text: string | null, layer: Layer): ((row: number) => boolean)
   return compileFilter(text, readColumns(layer, fields));
 }
 
-function checkValues(values: Float64Array, layer: Layer, { value }: AssessPlan): void {
-  const subject = `Cannot test field ${value} of ${layer.source}`;
-  if (values.length < FEWEST_AREAS) {
-    throw new UnfitDataError(
-      `${subject} as ${values.length} of its ${layer.count} areas can be used and at least ${FEWEST_AREAS} are needed; ` +
-        "check the filters and the missing values",
-    );
-  }
-  if (values.every((other) => other === values[0])) {
-    throw new UnfitDataError(
-      `${subject} as all ${values.length} values are equal (${
-        values[0]
-      }), so that nothing can be clustered`,
-    );
-  }
+function checkAreas(usable: number, layer: Layer, plan: AssessPlan): void {
+  if (usable >= FEWEST_AREAS) return;
+  throw new UnfitDataError(
+    `${
+      subject(layer, plan)
+    } as ${usable} of its ${layer.count} areas can be used and at least ${FEWEST_AREAS} are needed; ` +
+      "check the filters and the missing values",
+  );
+}
+
+function checkValues(values: Float64Array, layer: Layer, plan: AssessPlan): void {
+  if (values.some((other) => other !== values[0])) return;
+  throw new UnfitDataError(
+    `${subject(layer, plan)} as all ${values.length} values are equal (${
+      values[0]
+    }), so that nothing can be clustered`,
+  );
+}
+
+function subject(layer: Layer, { indicator }: AssessPlan): string {
+  return indicator.kind === "rate"
+    ? `Cannot test the rate ${indicator.cases}/${indicator.population} of ${layer.source}`
+    : `Cannot test field ${indicator.field} of ${layer.source}`;
 }

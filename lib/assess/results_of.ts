@@ -7,6 +7,7 @@ import { intervalOfP, twoSidedP } from "../inference/p_value.ts";
 import type { JoinReport } from "../read/join.ts";
 import { ruleText } from "../neighbors/rule.ts";
 import { VERSION } from "../layer/version.ts";
+import type { EbIndex } from "../statistics/eb_index.ts";
 import { verdictOf } from "../sweep/verdict.ts";
 import type { FlaggedArea } from "../sweep/verdict_input.ts";
 import type {
@@ -18,7 +19,9 @@ import type {
 } from "../write/results.ts";
 import { classCounts } from "./area_results.ts";
 import type { Findings } from "./findings.ts";
+import { rateResults } from "./rate_results.ts";
 import { referenceDistribution } from "./reference_distribution.ts";
+import { figure } from "./spread.ts";
 import type { Study } from "./study.ts";
 
 /** Results of one indicator; numbers that are undefined are null. */
@@ -105,9 +108,11 @@ function runOf({ plan, indicator, main, rule }: Study, found: Findings, areas: A
       min: values.reduce((least, value) => Math.min(least, value), Infinity),
       max: values.reduce((most, value) => Math.max(most, value), -Infinity),
     },
-    global: { moranI: globalOf(found) },
+    transform: plan.indicator.transform,
+    global: { moranI: globalOf(found), ebIndex: found.rate && ebIndexOf(found.rate.ebIndex) },
     reference: referenceDistribution(found.reference.drawn),
     local: localOf(found, areas, plan),
+    rate: found.rate && rateResults(found.rate),
   };
 }
 
@@ -126,6 +131,10 @@ function globalOf({ moran, reference }: Findings): GlobalMoranResult {
     pInterval: intervalOfP(reference),
     alternative: "two-sided",
   };
+}
+
+function ebIndexOf({ value, asPublished }: EbIndex): NonNullable<Run["global"]["ebIndex"]> {
+  return { value: figure(value), asPublished: figure(asPublished) };
 }
 
 function localOf(
@@ -159,8 +168,4 @@ function flaggedAreas(areas: AreaResults, names: readonly string[]): FlaggedArea
       class: name,
       steady: areas.steady?.[row] ?? null,
     }));
-}
-
-function figure(value: number): number | null {
-  return Number.isFinite(value) ? value : null;
 }

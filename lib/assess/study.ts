@@ -49,7 +49,7 @@ export async function layStudy(
   const main = builder.build(rule, plan.weights);
   if (main.weights.indices.length === 0) {
     throw new UnfitDataError(
-      `Cannot test ${plan.value} as no area has a neighbor under ${
+      `Cannot test ${indicator.name} as no area has a neighbor under ${
         ruleText(rule)
       }; choose a wider rule with --neighbors`,
     );

@@ -22,8 +22,8 @@ export type Adjustment = typeof ADJUSTMENTS[number];
  * ```ts
  * import assert from "node:assert/strict";
  * const p = Float64Array.of(0.01, NaN, 0.04);
- * assert.deepEqual(adjustP(p, "bonferroni"), Float64Array.of(0.02, NaN, 0.08));
- * assert.deepEqual(adjustP(p, "bh"), Float64Array.of(0.02, NaN, 0.04));
+ * assert.deepEqual([...adjustP(p, "bonferroni")], [0.02, NaN, 0.08]);
+ * assert.deepEqual([...adjustP(p, "bh")], [0.02, NaN, 0.04]);
  * ```
  */
 export function adjustP(p: Float64Array, method: Adjustment): Float64Array {

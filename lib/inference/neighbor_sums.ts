@@ -15,21 +15,8 @@ import type { RankedJob } from "./ranked_job.ts";
 import { runJob } from "./run_job.ts";
 import { type Seed, seedFromText } from "./seed.ts";
 import { createSubsetCounter, smallerSide, subsetsOf } from "./subset_counts.ts";
+import { type Ledger, openLedger, type SumCounts } from "./sum_counts.ts";
 import { AREAS_PER_UNIT, TAIL_HITS, type WeighedJob } from "./weighed_job.ts";
-
-/** Counts of each area, length n; `permutations` is 0 where the area is alone or was not asked for. */
-export interface SumCounts {
-  /** Permutations whose neighbors' sum is at least the observed one, ties included. */
-  readonly atLeast: Uint32Array;
-  /** Permutations whose neighbors' sum is at most the observed one, ties included. */
-  readonly atMost: Uint32Array;
-  /** Permutations drawn, or cases enumerated. */
-  readonly permutations: Uint32Array;
-  /** 1 where every case was counted. */
-  readonly enumerated: Uint8Array;
-  /** 1 where drawing stopped early, at the draw that gave the rarer tail enough. */
-  readonly stopped: Uint8Array;
-}
 
 /** Options of {@link permuteNeighborSums}, all of which are settled. */
 export interface SumOptions extends PermuteOptions {
@@ -55,21 +42,14 @@ export async function permuteNeighborSums(
   weights: Weights,
   options: SumOptions,
 ): Promise<SumCounts> {
-  const n = z.length;
-  const counts: SumCounts = {
-    atLeast: new Uint32Array(n),
-    atMost: new Uint32Array(n),
-    permutations: new Uint32Array(n),
-    enumerated: new Uint8Array(n),
-    stopped: new Uint8Array(n),
-  };
+  const ledger = openLedger(z.length);
   const seed = seedFromText(options.seed ?? "nearkin");
   const rows = sortRows(weights, options);
-  enumerateSubsets(counts, { z, weights, areas: rows.subsets });
-  enumerateArrangements(counts, { z, weights, areas: rows.arrangements });
-  await sampleRanked(counts, { z, weights, seed, rows, options });
-  await sampleWeighed(counts, { z, weights, seed, rows, options });
-  return counts;
+  enumerateSubsets(ledger, { z, weights, areas: rows.subsets });
+  enumerateArrangements(ledger, { z, weights, areas: rows.arrangements });
+  await sampleRanked(ledger, { z, weights, seed, rows, options });
+  await sampleWeighed(ledger, { z, weights, seed, rows, options });
+  return ledger.counts;
 }
 
 interface Task {
@@ -77,7 +57,7 @@ interface Task {
   readonly weights: Weights;
 }
 
-function enumerateSubsets(counts: SumCounts, task: Task & { areas: Uint32Array }): void {
+function enumerateSubsets(ledger: Ledger, task: Task & { areas: Uint32Array }): void {
   const { z, weights, areas } = task;
   if (areas.length === 0) return;
   const { offsets, observed } = scaleRows(weights, areas, z);
@@ -85,7 +65,7 @@ function enumerateSubsets(counts: SumCounts, task: Task & { areas: Uint32Array }
   const largest = neighbors.reduce((max, k) => Math.max(max, smallerSide(z.length, k)), 0);
   const counter = createSubsetCounter(z, largest);
   areas.forEach((area, a) =>
-    record(counts, area, {
+    ledger.enter(area, {
       ...counter.count(area, neighbors[a], observed[a]),
       permutations: subsetsOf(z.length - 1, neighbors[a]),
       enumerated: true,
@@ -93,12 +73,12 @@ function enumerateSubsets(counts: SumCounts, task: Task & { areas: Uint32Array }
   );
 }
 
-function enumerateArrangements(counts: SumCounts, task: Task & { areas: Uint32Array }): void {
+function enumerateArrangements(ledger: Ledger, task: Task & { areas: Uint32Array }): void {
   const { z, weights, areas } = task;
   const rows = scaleRows(weights, areas, z);
   areas.forEach((area, a) => {
     const row = rows.weights.subarray(rows.offsets[a], rows.offsets[a + 1]);
-    record(counts, area, {
+    ledger.enter(area, {
       ...countArrangements(z, { area, weights: row, observed: rows.observed[a] }),
       permutations: arrangementsOf(z.length - 1, row.length),
       enumerated: true,
@@ -108,7 +88,7 @@ function enumerateArrangements(counts: SumCounts, task: Task & { areas: Uint32Ar
 
 type Sampling = Task & { seed: Seed; rows: LocalRows; options: SumOptions };
 
-async function sampleRanked(counts: SumCounts, sampling: Sampling): Promise<void> {
+async function sampleRanked(ledger: Ledger, sampling: Sampling): Promise<void> {
   const { z, weights, seed, rows, options } = sampling;
   if (rows.ranked.length === 0) return;
   const { offsets, observed } = scaleRows(weights, rows.ranked, z);
@@ -128,13 +108,18 @@ async function sampleRanked(counts: SumCounts, sampling: Sampling): Promise<void
   };
   const parts = await runJob(job, options);
   for (let a = 0; a < order.length; a++) {
-    const area = order[a];
-    // A worker's share may lie below 0 (areas that drew themselves are corrected); the sum wraps around to its count.
+    let atLeast = 0, atMost = 0;
     for (const part of parts) {
-      counts.atLeast[area] += part.atLeast[a];
-      counts.atMost[area] += part.atMost[a];
+      // A worker's share may lie below 0, as areas that drew themselves are corrected; only the sum is a count.
+      atLeast += part.atLeast[a] | 0;
+      atMost += part.atMost[a] | 0;
     }
-    counts.permutations[area] = options.permutations;
+    ledger.enter(order[a], {
+      atLeast,
+      atMost,
+      permutations: options.permutations,
+      enumerated: false,
+    });
   }
 }
 
@@ -152,15 +137,15 @@ function testedFirst(z: Float64Array, order: Uint32Array): Float64Array {
 }
 
 /** First a fixed number of draws for all, then more for those that are still rare in a tail. */
-async function sampleWeighed(counts: SumCounts, sampling: Sampling): Promise<void> {
+async function sampleWeighed(ledger: Ledger, sampling: Sampling): Promise<void> {
   const { rows, options } = sampling;
   const first = Math.min(options.permutations, FIRST_DRAWS);
-  await weigh(counts, { ...sampling, areas: rows.weighed, from: 0, to: first, stopping: false });
+  await weigh(ledger, { ...sampling, areas: rows.weighed, from: 0, to: first, stopping: false });
   if (first === options.permutations) return;
   const rare = rows.weighed.filter((a) =>
-    Math.min(counts.atLeast[a], counts.atMost[a]) < TAIL_HITS
+    Math.min(ledger.counts.atLeast[a], ledger.counts.atMost[a]) < TAIL_HITS
   );
-  await weigh(counts, {
+  await weigh(ledger, {
     ...sampling,
     areas: rare,
     from: first,
@@ -171,7 +156,7 @@ async function sampleWeighed(counts: SumCounts, sampling: Sampling): Promise<voi
 
 type Weighing = Sampling & { areas: Uint32Array; from: number; to: number; stopping: boolean };
 
-async function weigh(counts: SumCounts, weighing: Weighing): Promise<void> {
+async function weigh(ledger: Ledger, weighing: Weighing): Promise<void> {
   const { z, weights, seed, areas, from, to, stopping, options } = weighing;
   if (areas.length === 0) return;
   const job: WeighedJob = {
@@ -183,34 +168,18 @@ async function weigh(counts: SumCounts, weighing: Weighing): Promise<void> {
     z,
     areas,
     ...scaleRows(weights, areas, z),
-    atLeast: gather(counts.atLeast, areas),
-    atMost: gather(counts.atMost, areas),
+    atLeast: gather(ledger.counts.atLeast, areas),
+    atMost: gather(ledger.counts.atMost, areas),
   };
   for (const part of (await runJob(job, options)).flat()) {
     part.drawn.forEach((permutations, a) =>
-      record(counts, areas[part.unit * AREAS_PER_UNIT + a], {
+      ledger.enter(areas[part.unit * AREAS_PER_UNIT + a], {
         atLeast: part.atLeast[a],
         atMost: part.atMost[a],
         permutations,
+        enumerated: false,
         stopped: part.stopped[a] === 1,
       })
     );
   }
-}
-
-interface AreaCounts {
-  readonly atLeast: number;
-  readonly atMost: number;
-  readonly permutations: number;
-  readonly enumerated?: boolean;
-  readonly stopped?: boolean;
-}
-
-/** Enters an area's counts into the record that this module is filling. */
-function record(counts: SumCounts, area: number, found: AreaCounts): void {
-  counts.atLeast[area] = found.atLeast;
-  counts.atMost[area] = found.atMost;
-  counts.permutations[area] = found.permutations;
-  counts.enumerated[area] = Number(found.enumerated ?? false);
-  counts.stopped[area] = Number(found.stopped ?? false);
 }

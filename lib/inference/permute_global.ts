@@ -82,16 +82,21 @@ export async function permuteMoran(
       drawn[d].set(each.map((sum) => sum / s0[d]), unit * SHUFFLES_PER_UNIT)
     );
   }
-  return drawn.map((each, d) => compare(job.observed[d] / s0[d], each, false));
+  return drawn.map((each, d) => compareWithDrawn(job.observed[d] / s0[d], each, false));
 }
 
 function enumerateOrders(z: Float64Array, pairs: PairLinks, s0: number): GlobalReference {
   const drawn: number[] = [];
   visitOrders(z, (order) => drawn.push(quadraticForm(pairs, order) / s0));
-  return compare(drawn[0], Float64Array.from(drawn), true);
+  return compareWithDrawn(drawn[0], Float64Array.from(drawn), true);
 }
 
-function compare(observed: number, drawn: Float64Array, enumerated: boolean): GlobalReference {
+/** Counts the drawn values at least and at most the observed one, ties in both. */
+export function compareWithDrawn(
+  observed: number,
+  drawn: Float64Array,
+  enumerated: boolean,
+): GlobalReference {
   let atLeast = 0, atMost = 0;
   for (let p = 0; p < drawn.length; p++) {
     if (drawn[p] >= observed - TIE) atLeast++;

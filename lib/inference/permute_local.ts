@@ -6,8 +6,9 @@
 import { checkLengths } from "../statistics/check_lengths.ts";
 import { standardize, TIE } from "../statistics/standardize.ts";
 import type { Weights } from "../weights/weights.ts";
-import { permuteNeighborSums, type SumCounts } from "./neighbor_sums.ts";
+import { permuteNeighborSums } from "./neighbor_sums.ts";
 import { checkPermutations, checkWorkers, type PermuteOptions } from "./options.ts";
+import type { SumCounts } from "./sum_counts.ts";
 
 /**
  * Counts of each area, length n, in terms of local I: `atLeast` is how many permutations gave an I at least

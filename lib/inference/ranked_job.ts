@@ -44,7 +44,7 @@ export interface RankedPart {
 /** Most sums held at a time; 16 MB. */
 const MOST_SUMS = 2 ** 21;
 /** Longest slice in blocks: long enough to spread the search of a million areas, short enough to pause. */
-const MOST_BLOCKS = 128;
+const MOST_BLOCKS = 64;
 
 /** Permutations in a unit: whole blocks, fewer where many distinct neighbor counts need many sums. */
 export function rankedSlice({ degrees }: RankedJob): number {

@@ -14,6 +14,7 @@ import {
   permuteLocalMoran,
   type PermuteLocalOptions,
 } from "./permute_local.ts";
+import { countsOf } from "./sum_counts.ts";
 
 /** Options of {@link testLocalMoran}. */
 export interface TestLocalOptions extends Omit<PermuteLocalOptions, "areas"> {
@@ -141,17 +142,6 @@ function isAtFloor(
   i: number,
 ): boolean {
   return permutations[i] > 0 && !enumerated[i] && Math.min(atLeast[i], atMost[i]) === 0;
-}
-
-/** Counts of one area, as the functions of p take them. */
-export function countsOf(reference: LocalReference, area: number) {
-  return {
-    atLeast: reference.atLeast[area],
-    atMost: reference.atMost[area],
-    permutations: reference.permutations[area],
-    enumerated: reference.enumerated[area] === 1,
-    stopped: reference.stopped[area] === 1,
-  };
 }
 
 function replaced(

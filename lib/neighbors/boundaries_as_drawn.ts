@@ -12,7 +12,7 @@ import { globePlaces } from "./globe.ts";
 import { nestedAreas } from "./nested_areas.ts";
 import { indexSegments } from "./segment_index.ts";
 import { linkSharedPlaces } from "./shared_places.ts";
-import { matchSegments } from "./shared_segments.ts";
+import { matchSegments, type SharedSegments } from "./shared_segments.ts";
 import { isLinked, type Topology } from "./topology.ts";
 import { topologyFromPairs } from "./topology_from_pairs.ts";
 import { type VertexIds, vertexIds } from "./vertex_ids.ts";
@@ -49,8 +49,8 @@ export interface ContiguityReport {
 /** Shared boundaries, and what is needed to look for more. */
 export interface DrawnContiguity extends Contiguity {
   readonly boundaries: Boundaries;
-  /** 1 at the first vertex of each segment that no other area has. */
-  readonly loose: Uint8Array;
+  /** Segments by who has them. */
+  readonly segments: SharedSegments;
   /** Coordinate units around the globe, where the layer spans more than half of it; else 0. */
   readonly period: number;
 }
@@ -81,18 +81,21 @@ export function findAsDrawn(geometry: FlatGeometry, geographic: boolean): DrawnC
       "Cannot find shared boundaries as the layer has only points; choose nearest:6 or within:DIST",
     );
   }
-  const tolerance = TOLERANCE * Math.hypot(box[2] - box[0], box[3] - box[1]);
+  const tolerance = TOLERANCE * Math.sqrt((box[2] - box[0]) ** 2 + (box[3] - box[1]) ** 2);
   const places = vertexIds(
     geographic ? globePlaces(geometry.xy, box, tolerance) : geometry.xy,
     tolerance,
   );
   const byPlace = linkSharedPlaces(boundaries, places.ids, places.count);
-  const { one, other, loose } = matchSegments(boundaries, places.ids);
+  const segments = matchSegments(boundaries, places.ids);
   const period = geographic && box[2] - box[0] > 180 ? 360 : 0;
-  const { contacts, overlaps } = compareLoose(geometry, boundaries, loose, { tolerance, period });
+  const { contacts, overlaps } = compareLoose(geometry, boundaries, segments.loose, {
+    tolerance,
+    period,
+  });
   const along = contacts.filter(({ stretch }) => stretch > MIN_STRETCH * tolerance);
   const areas = boundaries.areas;
-  const matched = topologyFromPairs(areas, one, other);
+  const matched = topologyFromPairs(areas, segments.one, segments.other);
   return {
     touching: union(byPlace, linkPairs(areas, [...contacts, ...overlaps])),
     edge: union(matched, linkPairs(areas, [...along, ...overlaps])),
@@ -104,7 +107,7 @@ export function findAsDrawn(geometry: FlatGeometry, geographic: boolean): DrawnC
       snappedPairs: 0,
     },
     boundaries,
-    loose,
+    segments,
     period,
   };
 }

@@ -25,6 +25,21 @@ export type { Ground } from "./ground.ts";
  *
  * @throws {UsageError} from the function, when the ground lacks what the rule needs.
  * @throws {UnfitDataError} from the function, when there are too few areas or too many links.
+ *
+ * @example Three places on a line, each linked with its nearest, both ways
+ * ```ts
+ * import assert from "node:assert/strict";
+ * import { parseRule } from "./rule.ts";
+ * const build = neighborBuilder({
+ *   geometry: null,
+ *   points: Float64Array.of(0, 0, 10, 0, 15, 0),
+ *   count: 3,
+ *   usable: Uint8Array.of(1, 1, 1),
+ * });
+ * const { offsets, indices } = build(parseRule("nearest:1 either"));
+ * assert.deepEqual([...offsets], [0, 1, 3, 4]);
+ * assert.deepEqual([...indices], [1, 0, 2, 1]);
+ * ```
  */
 export function neighborBuilder(ground: Ground): (rule: Rule) => Topology {
   const sources = groundSources(ground);

@@ -11,7 +11,9 @@ import { union } from "./combine.ts";
 import { metersPerDegree } from "./globe.ts";
 import { once } from "./once.ts";
 import { indexSegments } from "./segment_index.ts";
-import { isLinked } from "./topology.ts";
+import { smallGap } from "./small_gap.ts";
+import { measureShared } from "./shared_lengths.ts";
+import { isLinked, type Topology } from "./topology.ts";
 
 export type { Contiguity, ContiguityReport } from "./boundaries_as_drawn.ts";
 
@@ -29,9 +31,11 @@ export interface ContiguityFinder {
   readonly find: (snap: Length | null) => Contiguity;
   /**
    * Pairs at most `gap` meters apart that do not touch, narrowest first. With a small gap these are
-   * digitizing errors; a `snap` of no less than their gaps links them.
+   * digitizing errors; a `snap` of no less than their gaps links them. @default {@link smallGap}
    */
-  readonly nearMisses: (gap: number) => NearMiss[];
+  readonly nearMisses: (gap?: number) => NearMiss[];
+  /** The `edge` topology with the length of each shared boundary, in meters, as `given`. */
+  readonly sharedLengths: (snap: Length | null) => Topology;
 }
 
 /** In what units the boundaries are. */
@@ -58,13 +62,17 @@ export function contiguityFinder(
   const scale = (y: number): Scale =>
     geographic ? metersPerDegree(y) : { east: metersPerUnit, north: metersPerUnit };
   const drawn = once(() => findAsDrawn(geometry, geographic));
-  const loose = once(() => indexSegments(drawn().boundaries, drawn().loose, drawn().period));
+  const looseIndex = once(() => {
+    const { boundaries, segments, period } = drawn();
+    return indexSegments(boundaries, segments.loose, period);
+  });
   const snapped = new Map<number, Contiguity>();
 
   /** Contacts across gaps, of pairs that touch and of pairs that do not. */
   function contactsWithin(reach: number): AreaContact[] {
-    const { boundaries, period } = drawn();
-    return areaContacts(boundaries, { from: drawn().loose, index: loose(), reach, scale, period });
+    const { boundaries, segments, period } = drawn();
+    const search = { from: segments.loose, index: looseIndex(), reach, scale, period };
+    return areaContacts(boundaries, search);
   }
 
   function close(reach: number): Contiguity {
@@ -80,17 +88,23 @@ export function contiguityFinder(
     };
   }
 
+  function find(snap: Length | null): Contiguity {
+    if (snap === null) return drawn();
+    const contiguity = snapped.get(snap.meters) ?? close(snap.meters);
+    snapped.set(snap.meters, contiguity);
+    return contiguity;
+  }
+
   return {
-    find: (snap) => {
-      if (snap === null) return drawn();
-      const contiguity = snapped.get(snap.meters) ?? close(snap.meters);
-      snapped.set(snap.meters, contiguity);
-      return contiguity;
-    },
-    nearMisses: (gap) =>
+    find,
+    nearMisses: (gap = smallGap(geometry, scale)) =>
       contactsWithin(gap)
         .filter(({ one, other }) => !isLinked(drawn().touching, one, other))
         .map(({ one, other, gap }) => ({ one, other, gap }))
         .sort((a, b) => a.gap - b.gap || a.one - b.one || a.other - b.other),
+    sharedLengths: (snap) => {
+      const contacts = contactsWithin(snap?.meters ?? drawn().report.tolerance * scale(0).north);
+      return measureShared(find(snap).edge, drawn(), contacts, scale);
+    },
   };
 }

@@ -4,7 +4,7 @@
  * @module
  */
 import { joinSets, singleSets } from "./disjoint_sets.ts";
-import { distance } from "./gabriel.ts";
+import { distanceBetween } from "./distance_between.ts";
 import { nearestTable } from "./nearest_table.ts";
 import { distinctPlaces } from "./places.ts";
 import { indexPoints } from "./point_index.ts";
@@ -21,7 +21,7 @@ export function linkDistances({ offsets, indices }: Topology, points: Float64Arr
   const lengths = new Float64Array(indices.length);
   for (let i = 0; i + 1 < offsets.length; i++) {
     for (let link = offsets[i]; link < offsets[i + 1]; link++) {
-      lengths[link] = distance(points, i, indices[link]);
+      lengths[link] = distanceBetween(points, i, indices[link]);
     }
   }
   return lengths;
@@ -37,7 +37,7 @@ export function kNearestDistances(points: Float64Array, k: number): Float64Array
   if (k >= index.count) return distances;
   const { near, width } = nearestTable(index, k);
   for (let at = 0; at < index.count; at++) {
-    distances[index.ids[at]] = distance(index.xy, at, near[at * width + k - 1]);
+    distances[index.ids[at]] = distanceBetween(index.xy, at, near[at * width + k - 1]);
   }
   return distances;
 }
@@ -71,7 +71,7 @@ export function connectingDistances(points: Float64Array): ConnectingDistances {
 function longestOfTree(points: RoundedPoints): number {
   const { xy } = distinctPlaces(points);
   const { one, other } = triangulate({ xy, perUnit: points.perUnit });
-  const lengths = Float64Array.from(one, (p, e) => distance(xy, p, other[e]));
+  const lengths = Float64Array.from(one, (p, e) => distanceBetween(xy, p, other[e]));
   const sorted = lengths.toSorted();
   let low = 0, high = sorted.length - 1;
   while (low < high) {

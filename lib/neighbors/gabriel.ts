@@ -3,7 +3,10 @@
  *
  * @module
  */
+import { distanceBetween } from "./distance_between.ts";
 import type { Edges } from "./triangulate.ts";
+
+export { distanceBetween as distance } from "./distance_between.ts";
 
 /**
  * Keeps the edges whose circle, with the edge as diameter, holds no third place, neither inside nor on the
@@ -19,7 +22,9 @@ export function gabrielEdges(xy: Float64Array, edges: Edges, grain: number): Edg
   return keepEdges(
     edges,
     (p, q, corners) =>
-      corners.every((c) => c < 0 || beyondCircle(xy, p, q, c) > 2 * grain * distance(xy, p, q)),
+      corners.every((c) =>
+        c < 0 || beyondCircle(xy, p, q, c) > 2 * grain * distanceBetween(xy, p, q)
+      ),
   );
 }
 
@@ -27,12 +32,6 @@ export function gabrielEdges(xy: Float64Array, edges: Edges, grain: number): Edg
 function beyondCircle(xy: Float64Array, p: number, q: number, c: number): number {
   return (xy[2 * p] - xy[2 * c]) * (xy[2 * q] - xy[2 * c]) +
     (xy[2 * p + 1] - xy[2 * c + 1]) * (xy[2 * q + 1] - xy[2 * c + 1]);
-}
-
-/** Distance of two places. */
-export function distance(xy: Float64Array, p: number, q: number): number {
-  const dx = xy[2 * p] - xy[2 * q], dy = xy[2 * p + 1] - xy[2 * q + 1];
-  return Math.sqrt(dx * dx + dy * dy);
 }
 
 /** The edges for which `keeps` is true, given both ends and the corners that face the edge. */

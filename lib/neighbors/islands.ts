@@ -24,7 +24,7 @@ export function linkIslands(topology: Topology, nearest: () => Topology): Topolo
 }
 
 /** Areas without a neighbor of their own, ascending. */
-export function aloneIn({ offsets }: Topology): Uint32Array {
+function aloneIn({ offsets }: Topology): Uint32Array {
   const alone: number[] = [];
   for (let i = 0; i + 1 < offsets.length; i++) if (offsets[i] === offsets[i + 1]) alone.push(i);
   return Uint32Array.from(alone);

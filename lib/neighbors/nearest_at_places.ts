@@ -28,15 +28,17 @@ export function nearestAtPlaces(
   const placeWidth = Math.min(width, placeIndex.count - 1);
   const nearPlaces = search(placeIndex, placeWidth);
   const near = new Uint32Array(index.count * width);
+  const { starts, members } = places;
   for (let at = 0; at < placeIndex.count; at++) {
     const others = nearPlaces.subarray(at * placeWidth, (at + 1) * placeWidth);
     const ranked = nearestMembers(places, placeIndex, { at, others, most: width + 1 });
     const place = placeIndex.ids[at];
-    for (let m = places.starts[place]; m < places.starts[place + 1]; m++) {
-      const id = places.members[m];
-      let write = treeOf[id] * width;
+    for (let m = starts[place]; m < starts[place + 1]; m++) {
+      let write = treeOf[members[m]] * width;
       const end = write + width;
-      for (const other of ranked) if (other !== id && write < end) near[write++] = treeOf[other];
+      for (let r = 0; write < end; r++) {
+        if (ranked[r] !== members[m]) near[write++] = treeOf[ranked[r]];
+      }
     }
   }
   return near;
@@ -53,19 +55,18 @@ function nearestMembers(
   },
 ): number[] {
   const ids: number[] = [], grains: number[] = [];
-  const add = (other: number) => {
+  for (let o = -1; o < others.length; o++) {
+    const other = o < 0 ? at : others[o];
     const place = index.ids[other], distance = grainsBetween(index, at, other);
     const end = Math.min(starts[place + 1], starts[place] + most);
     for (let m = starts[place]; m < end; m++) {
       ids.push(members[m]);
       grains.push(distance);
     }
-  };
-  add(at);
-  for (const other of others) add(other);
+  }
   // Places come in order already, and so do their points where each place has one.
   if (ids.length === others.length + 1) return ids;
-  const order = Array.from(ids, (_, r) => r);
+  const order = ids.map((_, r) => r);
   return order.sort((a, b) => grains[a] - grains[b] || ids[a] - ids[b]).map((r) => ids[r]);
 }
 

@@ -4,7 +4,7 @@
  * @module
  */
 import { refuseTooMany, sortRow } from "./link_room.ts";
-import { locatedPoints, type RoundedPoints } from "./rounded_points.ts";
+import { locatedPoints, type RoundedPoints, roundPoints } from "./rounded_points.ts";
 import type { Topology } from "./topology.ts";
 import { vertexIds } from "./vertex_ids.ts";
 
@@ -39,6 +39,17 @@ export function distinctPlaces({ xy, perUnit }: RoundedPoints): Places {
     places[2 * id + 1] = xy[2 * members[starts[id]] + 1];
   }
   return { xy: places, starts, members };
+}
+
+/** How many points share their place with another one. */
+export function countSharingPlaces(points: Float64Array): number {
+  const { starts } = distinctPlaces(roundPoints(points));
+  let sharing = 0;
+  for (let place = 0; place + 1 < starts.length; place++) {
+    const here = starts[place + 1] - starts[place];
+    if (here > 1) sharing += here;
+  }
+  return sharing;
 }
 
 /**

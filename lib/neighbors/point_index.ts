@@ -7,6 +7,7 @@
  * @module
  */
 import KDBush from "kdbush";
+import { distanceBetween } from "./distance_between.ts";
 import { locatedPoints, type RoundedPoints } from "./rounded_points.ts";
 
 /** Points in a leaf, less one; from 5 to 23 makes little difference to searches of a million points. */
@@ -49,8 +50,7 @@ export function indexPoints({ xy, perUnit }: RoundedPoints): PointIndex {
 
 /** Distance of two points by tree order, in whole grains. */
 export function grainsBetween({ xy, perUnit }: PointIndex, a: number, b: number): number {
-  const dx = xy[2 * a] - xy[2 * b], dy = xy[2 * a + 1] - xy[2 * b + 1];
-  return Math.round(Math.sqrt(dx * dx + dy * dy) * perUnit);
+  return Math.round(distanceBetween(xy, a, b) * perUnit);
 }
 
 /** Finds points around a place; what it found stands in `found` until the next call. */

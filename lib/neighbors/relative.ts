@@ -3,7 +3,8 @@
  *
  * @module
  */
-import { distance, keepEdges } from "./gabriel.ts";
+import { distanceBetween } from "./distance_between.ts";
+import { keepEdges } from "./gabriel.ts";
 import { indexPoints, rangeSearch } from "./point_index.ts";
 import type { RoundedPoints } from "./rounded_points.ts";
 import type { Edges } from "./triangulate.ts";
@@ -20,13 +21,13 @@ export function relativeEdges(places: RoundedPoints, edges: Edges): Edges {
   const { xy, perUnit } = places;
   const index = indexPoints(places);
   const { found, around } = rangeSearch(index);
-  const grains = (p: number, q: number) => Math.round(distance(xy, p, q) * perUnit);
+  const grains = (p: number, q: number) => Math.round(distanceBetween(xy, p, q) * perUnit);
   return keepEdges(edges, (p, q, corners) => {
     const length = grains(p, q);
     const blocks = (c: number) => c >= 0 && grains(p, c) < length && grains(q, c) < length;
     if (corners.some(blocks)) return false;
     // The two circles of radius d(p,q) overlap within √3/2 of it from the middle; a grain more is safe.
-    const reach = Math.sqrt(0.75) * distance(xy, p, q) + 1 / perUnit;
+    const reach = Math.sqrt(0.75) * distanceBetween(xy, p, q) + 1 / perUnit;
     const size = around((xy[2 * p] + xy[2 * q]) / 2, (xy[2 * p + 1] + xy[2 * q + 1]) / 2, reach);
     for (let f = 0; f < size; f++) {
       const c = index.ids[found[f]];

@@ -1,5 +1,5 @@
 /**
- * Topologies over fewer or more areas.
+ * Topologies over fewer areas.
  *
  * @module
  */
@@ -34,22 +34,6 @@ export function restrict(topology: Topology, usable: Uint8Array): Topology {
     indices: kept.slice(0, size),
     ...(weights && { given: weights.slice(0, size) }),
   };
-}
-
-/**
- * Puts areas back: from a topology among the areas at `places` to one among `count` areas, those not
- * named being alone. Cost: one pass over the links.
- *
- * @param places Position of each area of `topology` among the `count`, ascending.
- */
-export function spread(topology: Topology, places: Uint32Array, count: number): Topology {
-  if (places.length === count) return topology;
-  const offsets = new Uint32Array(count + 1);
-  places.forEach((place, i) => {
-    offsets[place + 1] = topology.offsets[i + 1] - topology.offsets[i];
-  });
-  for (let i = 0; i < count; i++) offsets[i + 1] += offsets[i];
-  return { ...topology, offsets, indices: topology.indices.map((i) => places[i]) };
 }
 
 /** Positions whose mask is not 0, ascending. */

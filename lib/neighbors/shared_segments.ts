@@ -13,6 +13,8 @@ export interface SharedSegments {
   readonly one: Uint32Array;
   /** The other area, parallel to `one`. */
   readonly other: Uint32Array;
+  /** First vertex of the matched segment, parallel to `one`. */
+  readonly starts: Uint32Array;
   /** 1 for the vertex at the start of each segment that no other area has. */
   readonly loose: Uint8Array;
 }
@@ -30,7 +32,7 @@ export function matchSegments({ areaOf, ends }: Boundaries, ids: Uint32Array): S
   const next = new Int32Array(n);
   const loose = new Uint8Array(n);
   let one: Uint32Array = new Uint32Array(n + 16), other: Uint32Array = new Uint32Array(n + 16);
-  let pairs = 0;
+  let starts: Uint32Array = new Uint32Array(n + 16), pairs = 0;
   for (let v = 0; v < n; v++) {
     if (ends[v] || ids[v] === ids[v + 1]) continue;
     const low = Math.min(ids[v], ids[v + 1]), high = Math.max(ids[v], ids[v + 1]);
@@ -44,11 +46,18 @@ export function matchSegments({ areaOf, ends }: Boundaries, ids: Uint32Array): S
       loose[v] = loose[use] = 0;
       one = withRoom(one, pairs + 1);
       other = withRoom(other, pairs + 1);
+      starts = withRoom(starts, pairs + 1);
+      starts[pairs] = v;
       one[pairs] = areaOf[use];
       other[pairs++] = areaOf[v];
     }
     next[v] = heads[home];
     heads[home] = v;
   }
-  return { one: one.slice(0, pairs), other: other.slice(0, pairs), loose };
+  return {
+    one: one.slice(0, pairs),
+    other: other.slice(0, pairs),
+    starts: starts.slice(0, pairs),
+    loose,
+  };
 }

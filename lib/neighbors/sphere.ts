@@ -3,7 +3,7 @@
  *
  * @module
  */
-import { distance } from "./gabriel.ts";
+import { distanceBetween } from "./distance_between.ts";
 import { withRoom } from "./link_room.ts";
 import { nearestTable } from "./nearest_table.ts";
 import { indexPoints, type PointIndex, rangeSearch } from "./point_index.ts";
@@ -29,7 +29,9 @@ export function sphereEdges(places: RoundedPoints): { one: Uint32Array; other: U
     for (let f = 0; f < size; f++) {
       const q = index.ids[found[f]];
       const smaller = radii[q] < radii[p] || (radii[q] === radii[p] && q < p);
-      if (!smaller || Math.round(distance(xy, p, q) * perUnit) >= radii[p] + radii[q]) continue;
+      if (!smaller || Math.round(distanceBetween(xy, p, q) * perUnit) >= radii[p] + radii[q]) {
+        continue;
+      }
       one = withRoom(one, pairs + 1);
       other = withRoom(other, pairs + 1);
       one[pairs] = p;
@@ -45,7 +47,9 @@ function circleGrains({ xy, perUnit }: RoundedPoints, index: PointIndex): Float6
   if (index.count < 2) return radii;
   const { near } = nearestTable(index, 1);
   for (let at = 0; at < index.count; at++) {
-    radii[index.ids[at]] = Math.round(distance(xy, index.ids[at], index.ids[near[at]]) * perUnit);
+    radii[index.ids[at]] = Math.round(
+      distanceBetween(xy, index.ids[at], index.ids[near[at]]) * perUnit,
+    );
   }
   return radii;
 }

@@ -17,13 +17,18 @@ export interface Topology {
   readonly given?: Float64Array;
 }
 
-/** Whether area `from` has the neighbor `to`. Cost: a binary search in its row. */
-export function isLinked({ offsets, indices }: Topology, from: number, to: number): boolean {
+/** Where the link from one area to another stands in `indices`, or -1. Cost: a binary search in the row. */
+export function linkAt({ offsets, indices }: Topology, from: number, to: number): number {
   let low = offsets[from], high = offsets[from + 1];
   while (low < high) {
     const middle = (low + high) >> 1;
     if (indices[middle] < to) low = middle + 1;
     else high = middle;
   }
-  return low < offsets[from + 1] && indices[low] === to;
+  return low < offsets[from + 1] && indices[low] === to ? low : -1;
+}
+
+/** Whether an area has the neighbor `to`. */
+export function isLinked(topology: Topology, from: number, to: number): boolean {
+  return linkAt(topology, from, to) >= 0;
 }

@@ -103,7 +103,7 @@ export function tableSize(n: number): number {
 
 /** Mixes two whole numbers of any size into 32 bits. */
 export function hashPair(a: number, b: number): number {
-  let hash = Math.imul(a % 4294967296, 0x9e3779b1) ^ Math.imul(b % 4294967296, 0x85ebca77);
+  let hash = Math.imul(a, 0x9e3779b1) ^ Math.imul(b, 0x85ebca77);
   hash = Math.imul(hash ^ (hash >>> 15), 0x2c1b3c6d);
   hash = Math.imul(hash ^ (hash >>> 12), 0x297a2d39);
   return hash ^ (hash >>> 15);

@@ -3,7 +3,8 @@
  *
  * @module
  */
-import { MOST_LINKS, refuseTooMany, sortRow, withRoom } from "./link_room.ts";
+import { closePairs } from "./close_pairs.ts";
+import { MOST_LINKS, refuseTooMany, sortRow } from "./link_room.ts";
 import { type PointIndex, rangeSearch } from "./point_index.ts";
 import type { Topology } from "./topology.ts";
 
@@ -18,56 +19,61 @@ import type { Topology } from "./topology.ts";
  * @throws {UnfitDataError} beyond 200 million links.
  */
 export function linkWithin(index: PointIndex, areas: number, distance: number): Topology {
-  const { count, ids } = index;
-  const { counts, near } = searchAll(index, distance);
+  const { count, ids, perUnit } = index;
+  const reach = (Math.round(distance * perUnit) + 0.5) / perUnit;
+  // When a guess is far beyond the limit, counting all links would take as long as they are many.
+  const guess = guessLinks(index, reach);
+  if (guess > 2 * MOST_LINKS) refuse(guess);
+  const { starts, near } = linksInTree(index, reach);
   const offsets = new Uint32Array(areas + 1);
-  for (let at = 0; at < count; at++) offsets[ids[at] + 1] = counts[at];
+  for (let at = 0; at < count; at++) offsets[ids[at] + 1] = starts[at + 1] - starts[at];
   for (let i = 0; i < areas; i++) offsets[i + 1] += offsets[i];
-  const indices = new Uint32Array(offsets[areas]);
-  let read = 0;
+  const indices = new Uint32Array(near.length);
   for (let at = 0; at < count; at++) {
-    const start = offsets[ids[at]], end = offsets[ids[at] + 1];
-    for (let link = start; link < end; link++) indices[link] = ids[near[read++]];
-    sortRow(indices, start, end);
+    const start = offsets[ids[at]];
+    let write = start;
+    for (let link = starts[at]; link < starts[at + 1]; link++) indices[write++] = ids[near[link]];
+    sortRow(indices, start, write);
   }
   return { offsets, indices };
 }
 
-/** Points asked to estimate how many links there will be. */
-const SAMPLE = 500;
-
-/** Rows by tree order, holding tree positions. */
-function searchAll(
-  index: PointIndex,
-  distance: number,
-): { counts: Uint32Array; near: Uint32Array } {
-  const { count, xy, perUnit } = index;
-  const reach = (Math.round(distance * perUnit) + 0.5) / perUnit;
-  const { found, around } = rangeSearch(index);
-  const search = (at: number) => around(xy[2 * at], xy[2 * at + 1], reach) - 1;
-  const estimate = estimateLinks(count, search);
-  // A wrong guess costs only time below the limit; beyond twice the limit it spares the search.
-  if (estimate > 2 * MOST_LINKS) refuseTooMany(estimate, BAND, REMEDY);
-  const counts = new Uint32Array(count);
-  let near: Uint32Array = new Uint32Array(Math.min(MOST_LINKS, estimate + 16)), links = 0;
-  for (let at = 0; at < count; at++) {
-    counts[at] = search(at);
-    let write = links;
-    links += counts[at];
-    if (links > MOST_LINKS) continue;
-    near = withRoom(near, links);
-    for (let f = 0; f <= counts[at]; f++) if (found[f] !== at) near[write++] = found[f];
+/** Links by tree positions, which keeps neighbors together in memory until all are known. */
+function linksInTree(index: PointIndex, reach: number): { starts: Uint32Array; near: Uint32Array } {
+  const { pairs, counts, partners } = closePairs(index, reach);
+  refuse(2 * pairs);
+  const starts = new Uint32Array(index.count + 1);
+  for (let at = 0, pair = 0; at < index.count; at++) {
+    starts[at + 1] += counts[at];
+    for (const end = pair + counts[at]; pair < end; pair++) starts[partners[pair] + 1]++;
   }
-  refuseTooMany(links, BAND, REMEDY);
-  return { counts, near };
+  for (let at = 0; at < index.count; at++) starts[at + 1] += starts[at];
+  const next = starts.slice(0, index.count);
+  const near = new Uint32Array(2 * pairs);
+  for (let at = 0, pair = 0; at < index.count; at++) {
+    for (const end = pair + counts[at]; pair < end; pair++) {
+      near[next[at]++] = partners[pair];
+      near[next[partners[pair]]++] = at;
+    }
+  }
+  return { starts, near };
 }
 
-const BAND = "this distance", REMEDY = "choose a shorter one, or nearest:K";
+function refuse(links: number): void {
+  refuseTooMany(links, "this distance", "choose a shorter one, or nearest:K");
+}
 
-/** Links of evenly chosen points, scaled up. */
-function estimateLinks(count: number, search: (at: number) => number): number {
+/** Points asked for a guess. */
+const SAMPLE = 500;
+
+/** Links of some points, evenly chosen in tree order, scaled up to all. */
+function guessLinks(index: PointIndex, reach: number): number {
+  const { count, xy } = index;
+  const { around } = rangeSearch(index);
   const step = Math.max(1, Math.floor(count / SAMPLE));
   let links = 0, asked = 0;
-  for (let at = 0; at < count; at += step, asked++) links += search(at);
+  for (let at = 0; at < count; at += step, asked++) {
+    links += around(xy[2 * at], xy[2 * at + 1], reach) - 1;
+  }
   return asked > 0 ? Math.round(links / asked * count) : 0;
 }

@@ -92,7 +92,7 @@ function findPlace(table: Table): Place {
   }
   throw new UsageError(
     `Cannot find coordinates in ${table.source}, which has ${columnList(table)}; ` +
-      "name the columns with --x and --y, or with --wkt",
+      "name the columns with --x and --y, or with --wkt, or join the table to a layer with --join",
   );
 }
 

@@ -9,6 +9,7 @@ import { type Fact, facts, nameList, section } from "./html_parts.ts";
 import { type Markup, markup } from "./markup.ts";
 import { percentText, valueText, wholeText } from "./number_text.ts";
 import type { ReportInput } from "./report_input.ts";
+import { transformWords } from "./value_methods.ts";
 
 /** Layer, values, areas left out, kinds of missing values, and the join. */
 export function dataSection({ results }: ReportInput): Markup {
@@ -62,9 +63,9 @@ function percentOf(share: number): string {
 function valueFacts({ runs, missingValues }: Results): Fact[] {
   const { indicator, values } = runs[0];
   return [
-    ["Value tested", markup`<code>${indicator}</code>`],
+    ["Value tested", markup`<code>${indicator}</code>, ${transformWords(runs[0])}`],
     [
-      "Values",
+      "Tested values",
       `mean ${valueText(values.mean)}, standard deviation ${
         valueText(values.sd)
       } (divisor n), from ${valueText(values.min)} to ${valueText(values.max)}`,
@@ -75,7 +76,7 @@ function valueFacts({ runs, missingValues }: Results): Fact[] {
 
 function countList(list: readonly (readonly [string, number])[]): string {
   if (list.length === 0) return "nothing";
-  return list.map(([what, count]) => `${what}: ${wholeText(count)}`).join("; ");
+  return list.map(([what, count]) => `${what} (${counted(count, "area")})`).join("; ");
 }
 
 function joinFacts(join: NonNullable<Results["join"]>): Fact[] {

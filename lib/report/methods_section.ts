@@ -11,6 +11,7 @@ import { pText, wholeText } from "./number_text.ts";
 import { citedIn, REFERENCES } from "./references.ts";
 import type { ReportInput } from "./report_input.ts";
 import { glossary } from "./rule_glossary.ts";
+import { valueMethods } from "./value_methods.ts";
 
 /** Methods as they were used in this run, then the papers they come from. */
 export function methodsSection({ results }: ReportInput): Markup {
@@ -33,7 +34,8 @@ ${
 function methodFacts(results: Results): (Fact | null)[] {
   const [run] = results.runs;
   return [
-    ["Values", valuesText()],
+    ...valueMethods(run),
+    ["Values", VALUES],
     ["Neighbors", neighborsText(results)],
     ["Distances", distancesText(results)],
     ["Weights", weightsText(run)],
@@ -48,11 +50,10 @@ function methodFacts(results: Results): (Fact | null)[] {
   ];
 }
 
-function valuesText(): string {
-  return "z is the distance of a value from the mean, in population standard deviations (divisor n), over all " +
-    "areas with a usable value. Numbers count as tied when they differ by at most 10⁻¹⁰ standard deviations. " +
-    "Areas without a usable value are taken out together with their links and stay in the outcome as rows.";
-}
+const VALUES =
+  "z is the distance of a value from the mean, in population standard deviations (divisor n), over all " +
+  "areas with a usable value. Numbers count as tied when they differ by at most 10⁻¹⁰ standard deviations. " +
+  "Areas without a usable value are taken out together with their links and stay in the outcome as rows.";
 
 function neighborsText({ runs, sweep }: Results): Markup {
   const rules = sweep

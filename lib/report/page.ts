@@ -14,6 +14,7 @@ import { cautionsSection, rerunSection } from "./page_closing.ts";
 import { pageHeader } from "./page_opening.ts";
 import { PAGE_STYLE } from "./page_style.ts";
 import { type FigureName, plotFigures } from "./plots.ts";
+import { ratesSection } from "./rates_section.ts";
 import type { ReportInput } from "./report_input.ts";
 import { sweepSection } from "./sweep_section.ts";
 
@@ -22,6 +23,7 @@ const CONTENTS = {
   map: "Map",
   areas: "Areas that stand out",
   whole: "The map as a whole",
+  rates: "Rates",
   sweep: "Would it still stand?",
   neighbors: "Neighbors",
   data: "Data",
@@ -53,18 +55,24 @@ export function reportPage(
 </head>
 <body>
 ${pageHeader(input)}<nav aria-label="Contents"><ul>${
-    Object.entries(CONTENTS).map(([id, title]) => markup`<li><a href="#${id}">${title}</a></li>`)
+    contentsOf(input).map(([id, title]) => markup`<li><a href="#${id}">${title}</a></li>`)
   }</ul></nav>
 <main>
 ${mapSection(input, figures)}${flaggedSection(input)}${globalSection(input, figures)}${
-    sweepSection(input, figures)
-  }${neighborsSection(input, figures)}${dataSection(input)}${methodsSection(input)}${
-    cautionsSection(input)
-  }${rerunSection(input)}</main>
+    ratesSection(input)
+  }${sweepSection(input, figures)}${neighborsSection(input, figures)}${dataSection(input)}${
+    methodsSection(input)
+  }${cautionsSection(input)}${rerunSection(input)}</main>
 <footer>Made with ${results.tool.name} ${results.tool.version}.</footer>
 </body>
 </html>
 `.markup;
+}
+
+/** Parts that this page has, by id and title. */
+function contentsOf({ results }: ReportInput): [string, string][] {
+  const isRate = results.runs[0].rate !== null;
+  return Object.entries(CONTENTS).filter(([id]) => id !== "rates" || isRate);
 }
 
 function mapSection(input: ReportInput, figures: ReadonlyMap<FigureName, string>): Markup {

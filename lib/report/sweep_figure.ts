@@ -20,12 +20,25 @@ const FAMILY_ROW = 32;
 const FOOT = 86;
 const RADIUS = 5.5;
 
-/** A line of the figure: a family's title or one definition. */
-interface Row {
+/** The title above a family's definitions. */
+interface TitleLine {
   readonly y: number;
   readonly color: string;
-  readonly title?: string;
-  readonly definition?: DefinitionResult;
+  readonly title: string;
+}
+
+/** The line of one definition. */
+interface DefinitionLine {
+  readonly y: number;
+  readonly color: string;
+  readonly definition: DefinitionResult;
+}
+
+/** All lines from the top down, and the height of the figure. */
+interface Layout {
+  readonly titles: readonly TitleLine[];
+  readonly lines: readonly DefinitionLine[];
+  readonly height: number;
 }
 
 /**
@@ -40,10 +53,10 @@ export function sweepFigure({ results }: ReportInput): Markup | null {
   if (sweep === null) return null;
   const { level } = results.runs[0].local;
   const expected = results.runs[0].global.moranI.expected;
-  const { rows, height } = rowsOf(sweep.definitions);
+  const { titles, lines, height } = layOut(sweep.definitions);
   const area: PlotArea = { ...PLOT, bottom: height - FOOT };
   const x = linearScale(domainOf(sweep.definitions, expected), [PLOT.left, PLOT.right]);
-  const main = sweep.definitions.find((definition) => definition.main);
+  const main = lines.find(({ definition }) => definition.main);
   return svgFigure(
     {
       label: `Moran's I under ${sweep.definitions.length} definitions of neighbor, from ${
@@ -52,31 +65,32 @@ export function sweepFigure({ results }: ReportInput): Markup | null {
       width: WIDTH,
       height,
     },
-    rows.map((row) => row.definition?.main ? stripe(row.y) : null),
+    main ? stripe(main.y) : null,
     columnHeads(),
     bottomAxis(x, area, { title: "Moran's I", grid: true, ticks: 8 }),
-    referenceLines(area, [
-      { name: "expected", at: expected === null ? null : x(expected) },
-      { name: "main", at: main?.value == null ? null : x(main.value) },
+    referenceLines(x, area, [
+      { name: "expected", value: expected },
+      { name: "main", value: main?.definition.value ?? null },
     ]),
-    rows.map((row) => row.title ? familyLine(row) : definitionLine(row, x, level)),
+    titles.map(({ y, color, title }) => svgText(8, y, title, { fill: color, weight: 600 })),
+    lines.map((line) => definitionLine(line, x, level)),
     key(level, height - 14),
   );
 }
 
-function rowsOf(definitions: readonly DefinitionResult[]): { rows: Row[]; height: number } {
-  const rows: Row[] = [];
+function layOut(definitions: readonly DefinitionResult[]): Layout {
+  const titles: TitleLine[] = [], lines: DefinitionLine[] = [];
   let y: number = PLOT.top;
   for (const group of byFamily(definitions)) {
     const { title, color } = FAMILY_LOOKS[group.family];
-    rows.push({ y: y + 20, color, title });
+    titles.push({ y: y + 20, color, title });
     y += FAMILY_ROW;
     for (const definition of group.definitions) {
-      rows.push({ y: y + ROW / 2, color, definition });
+      lines.push({ y: y + ROW / 2, color, definition });
       y += ROW;
     }
   }
-  return { rows, height: y + 10 + FOOT };
+  return { titles, lines, height: y + 10 + FOOT };
 }
 
 /** All values and the expectation, with some room. */
@@ -101,10 +115,11 @@ function columnHeads(): Markup {
 
 /** Lines through the whole plot; names move apart where the lines stand close. */
 function referenceLines(
+  x: LinearScale,
   { top, bottom }: PlotArea,
-  lines: readonly { readonly name: string; readonly at: number | null }[],
+  marks: readonly { readonly name: string; readonly value: number | null }[],
 ): Markup {
-  const known = lines.filter((line): line is { name: string; at: number } => line.at !== null)
+  const known = marks.flatMap(({ name, value }) => value === null ? [] : [{ name, at: x(value) }])
     .sort((a, b) => a.at - b.at);
   const isTight = known.length === 2 && known[1].at - known[0].at < 70;
   return markup`${
@@ -115,15 +130,15 @@ function referenceLines(
   }`;
 }
 
-function familyLine({ y, color, title }: Row): Markup {
-  return svgText(8, y, title!, { fill: color, weight: 600 });
-}
-
-function definitionLine({ y, color, definition }: Row, x: LinearScale, level: number): Markup {
-  const { value, p, pAdjusted, main } = definition!;
+function definitionLine(
+  { y, color, definition }: DefinitionLine,
+  x: LinearScale,
+  level: number,
+): Markup {
+  const { value, p, pAdjusted, main } = definition;
   const baseline = y + 4.5;
   const numbers = { anchor: "end", weight: main ? 600 : 400 } as const;
-  return markup`${ruleName(definition!, baseline)}${
+  return markup`${ruleName(definition, baseline)}${
     value === null ? null : definitionMark([x(value), y], color, {
       passes: p !== null && p <= level,
       passesAdjusted: pAdjusted !== null && pAdjusted <= level,

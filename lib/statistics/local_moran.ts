@@ -5,6 +5,7 @@
  */
 import type { Weights } from "../weights/weights.ts";
 import { checkLengths } from "./check_lengths.ts";
+import { conditionalLag } from "./conditional_lag.ts";
 import { type Quadrant, quadrantOf } from "./quadrant.ts";
 import { standardize } from "./standardize.ts";
 
@@ -51,36 +52,14 @@ export interface LocalMoran {
 export function localMoran(values: Float64Array, weights: Weights): LocalMoran {
   checkLengths(values, weights);
   const { z } = standardize(values);
-  const n = z.length;
-  const undefinedForAll = () => new Float64Array(n).fill(NaN);
-  const lag = undefinedForAll(), i = undefinedForAll();
-  const expected = undefinedForAll(), variance = undefinedForAll();
-  const quad = new Array<Quadrant | null>(n).fill(null);
-  for (let area = 0; area < n; area++) {
-    const start = weights.offsets[area], end = weights.offsets[area + 1];
-    if (start === end) continue;
-    let sum = 0, total = 0, squares = 0;
-    for (let e = start; e < end; e++) {
-      const weight = weights.values[e];
-      sum += weight * z[weights.indices[e]];
-      total += weight;
-      squares += weight * weight;
-    }
-    const own = z[area];
-    const others = momentsWithout(own, n);
-    lag[area] = sum;
-    i[area] = own * sum;
-    expected[area] = own * total * others.mean;
-    const spread = squares - total * total / (n - 1);
-    variance[area] = spread > 1e-14 * squares ? own * own * spread * others.variance : 0;
-    quad[area] = quadrantOf(own, total === 0 ? NaN : sum / total);
-  }
-  return { z, lag, i, expected, variance, quad };
-}
-
-/** Mean and variance (divisor N - 1) of the N = n - 1 standard scores that are left without `own`. */
-function momentsWithout(own: number, n: number): { mean: number; variance: number } {
-  const count = n - 1;
-  const mean = -own / count;
-  return { mean, variance: (n - own * own - count * mean * mean) / (count - 1) };
+  const { lag, total, expected, variance } = conditionalLag(z, weights);
+  const meanLag = (area: number) => total[area] === 0 ? NaN : lag[area] / total[area];
+  return {
+    z,
+    lag,
+    i: lag.map((sum, area) => z[area] * sum),
+    expected: expected.map((mean, area) => z[area] * mean),
+    variance: variance.map((spread, area) => z[area] ** 2 * spread),
+    quad: Array.from(z, (own, area) => quadrantOf(own, meanLag(area))),
+  };
 }

@@ -85,16 +85,16 @@ export function moranI(values: Float64Array, weights: Weights): MoranI {
 }
 
 /**
- * Makes sure that the weights can divide.
+ * Makes sure that the weights can divide; `statistic` is the name that a refusal gives.
  *
  * @throws UnfitDataError where the sum of all weights is not above 0: no links at all, or negative ones.
  */
-export function checkWeightSum(s0: number): void {
+export function checkWeightSum(s0: number, statistic = "Moran's I"): void {
   if (s0 > 0) return;
   throw new UnfitDataError(
     s0 === 0
-      ? "Cannot compute Moran's I as no area has a neighbor; choose a rule that links areas"
-      : `Cannot compute Moran's I as the weights sum to ${s0}; the sum has to be above 0`,
+      ? `Cannot compute ${statistic} as no area has a neighbor; choose a rule that links areas`
+      : `Cannot compute ${statistic} as the weights sum to ${s0}; the sum has to be above 0`,
   );
 }
 

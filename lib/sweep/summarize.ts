@@ -34,6 +34,7 @@ export function definitionResults(
     const reference = references[s];
     const [z] = standardScores(statistics[s]);
     const { pairs, islands, components, meanNeighbors } = topologySummary;
+    const p = reference && !Number.isNaN(z) ? twoSidedP(reference) : null;
     return {
       rule,
       weights: weightsText,
@@ -46,8 +47,9 @@ export function definitionResults(
       meanNeighbors,
       value: reference && reference.observed,
       z: orNull(z),
-      p: reference && !Number.isNaN(z) ? twoSidedP(reference) : null,
-      pAdjusted: orNull(adjusted[s]),
+      p,
+      // A doubled tail has twice the floor of a rank of |z|; an adjusted p below its own would puzzle.
+      pAdjusted: p === null ? null : Math.max(p, adjusted[s]),
       significantAreas: classes[s].reduce((count, own) => count + Number(isFlagged(own)), 0),
       overlap: orNull(overlap(classes[0], classes[s])),
     };

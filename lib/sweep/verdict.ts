@@ -21,6 +21,7 @@ import {
   strengthSentence,
 } from "./map_sentences.ts";
 import { pValue } from "./phrases.ts";
+import { rateSentence } from "./rate_sentence.ts";
 import { definitionsTried, type Finding, type VerdictInput } from "./verdict_input.ts";
 
 /** The paragraph: a headline, then sentences in order of weight. */
@@ -97,6 +98,7 @@ function sentencesOf(input: VerdictInput, finding: Finding): string[] {
     mainAloneSentence(input, finding),
     whereSentence(input, finding),
     steadySentence(input),
+    rateSentence(input, finding),
     familySentence(input, finding),
     floorSentence(input, finding),
     aloneSentence(input),

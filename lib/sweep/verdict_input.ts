@@ -30,6 +30,11 @@ export interface VerdictInput {
       /** Areas in each class, by the class's words. */
       readonly counts: Readonly<Record<string, number>>;
     };
+    /** The checks of a rate against one risk for all. @default the indicator is no rate */
+    readonly rate?: {
+      readonly overdispersion: { readonly p: number | null };
+      readonly constantRisk: { readonly p: number | null };
+    } | null;
   };
   /** Null where no other definition was tried. */
   readonly sweep: SweepResults | null;

@@ -49,6 +49,14 @@ function plainFields(areas: AreaResults): ColumnValues[] {
   ];
   if (areas.agree) fields.push(field(own("agree"), "number", areas.agree));
   if (areas.steady) fields.push(field(own("steady"), "text", areas.steady));
+  if (areas.rates) {
+    fields.push(
+      field(own("rate"), "number", areas.rates.rate),
+      field(own("shrunk"), "number", areas.rates.shrunk),
+      field(own("shrunk_local"), "number", areas.rates.shrunkLocal),
+      field(own("funnel"), "text", areas.rates.funnel),
+    );
+  }
   return fields;
 }
 

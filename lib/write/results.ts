@@ -9,7 +9,9 @@
 import * as z from "zod";
 import type { Family } from "../neighbors/rule.ts";
 import { TESTED_CLASSES } from "../sweep/area_classes.ts";
+import { TRANSFORMS } from "../prepare/transform.ts";
 import type { Steadiness } from "../sweep/stability.ts";
+import { type AreaRates, rateSchema } from "./rate_results.ts";
 
 const count = z.number().int().min(0);
 /** A number, or null where the statistic is undefined. */
@@ -88,20 +90,31 @@ const local = z.object({
 });
 export type LocalSummary = z.infer<typeof local>;
 
+const TESTED_TRANSFORMS = [...TRANSFORMS, "freeman-tukey", "standardized"] as const;
+
 const run = z.object({
   indicator: z.string(),
   neighbors,
   weights: z.string(),
   standardize: z.enum(["row", "none", "total", "variance"]),
   values: z.object({
-    mean: figure,
+    mean: figure.describe("Of the tested values, as the three below"),
     sd: figure.describe("Population standard deviation (divisor n)"),
     min: figure,
     max: figure,
   }),
-  global: z.object({ moranI: globalMoran }),
+  transform: z.enum(TESTED_TRANSFORMS)
+    .describe("How the tested values were made from what was read; of a rate, see `rate.tested`"),
+  global: z.object({
+    moranI: globalMoran,
+    ebIndex: z.object({ value: figure, asPublished: figure }).nullable()
+      .describe(
+        "Empirical-Bayes index of a rate (Assunção & Reis 1999), with z centered and as published",
+      ),
+  }),
   reference,
   local,
+  rate: rateSchema.nullable().describe("Null where the indicator is no rate"),
 });
 export type Run = z.infer<typeof run>;
 
@@ -201,11 +214,11 @@ export type Results = z.infer<typeof resultsSchema>;
  * "has none": an area left out, or alone.
  */
 export interface AreaResults {
-  /** Prefix of the result fields (the value field's name). */
+  /** Prefix of the result fields (the value field's or the rate's name). */
   readonly prefix: string;
   /** Reason why an area was left out, or null. */
   readonly leftOut: readonly (string | null)[];
-  /** The tested value as read (NaN where missing). */
+  /** The value as read, or the raw rate (NaN where missing). */
   readonly value: Float64Array;
   readonly z: Float64Array;
   /** Spatial lag of z, raw (with the weights as standardized). */
@@ -219,6 +232,8 @@ export interface AreaResults {
   /** Null without a sweep. */
   readonly agree: Float64Array | null;
   readonly steady: readonly (Steadiness | null)[] | null;
+  /** Null where the indicator is no rate. */
+  readonly rates: AreaRates | null;
 }
 
 /** The links of the main definition, by layer row, each directed link once. */

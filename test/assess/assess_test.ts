@@ -1,60 +1,11 @@
-/** The main job on open data, against values computed outside the project. */
+/** The main job on small maps: who counts, who does not, and what is kept of them. */
 import assert from "node:assert/strict";
 import { assess } from "../../lib/assess/assess.ts";
 import { writeAssessment } from "../../lib/assess/write_assessment.ts";
 import { readLayer } from "../../lib/read/vector.ts";
 import { assertClose } from "../support/close.ts";
 import { gridLayer } from "../support/grid_layer.ts";
-import { numberColumn, referenceCase, textColumn } from "../support/reference.ts";
 import { withFolder } from "../support/temp_folder.ts";
-
-const NC = new URL("../../testdata/data/nc.gpkg", import.meta.url).pathname;
-
-/** A table of North Carolina's counties with one column, numbers in shortest form. */
-function tableOf(name: string, values: Float64Array): string {
-  const counties = textColumn("nc.csv", "NAME");
-  return [`NAME,${name}`, ...counties.map((county, at) => `${county},${values[at]}`)].join("\n");
-}
-
-const births = numberColumn("nc.csv", "BIR74");
-const deaths = numberColumn("nc.csv", "SID74");
-const nonwhite = numberColumn("nc.csv", "NWBIR74");
-/** The variables of the cases nc-global-*; the formulas stand in the cases. */
-const VARIABLES: Readonly<Record<string, Float64Array>> = {
-  rate74: deaths.map((count, i) => 1000 * count / births[i]),
-  ft74: deaths.map((count, i) =>
-    Math.sqrt(1000) * (Math.sqrt(count / births[i]) + Math.sqrt((count + 1) / births[i]))
-  ),
-  nw74: nonwhite.map((count, i) => count / births[i]),
-};
-
-// Source: numpy dense computations on the open data of Cressie 1993, see the case files.
-for (
-  const [id, neighbors, standardize] of [
-    ["nc-global-queen_row", "touching", "row"],
-    ["nc-global-queen_unscaled", "touching", "none"],
-    ["nc-global-rook_unscaled", "edge", "none"],
-  ] as const
-) {
-  Deno.test(`assess() from GeoPackage and table gives the values of ${id}`, () =>
-    withFolder(async (folder) => {
-      const { expected } = referenceCase(id);
-      for (const [name, values] of Object.entries(VARIABLES)) {
-        await Deno.writeTextFile(`${folder}/${name}.csv`, tableOf(name, values));
-        const { results } = await assess(NC, {
-          ...{ value: name, join: `${folder}/${name}.csv`, on: "NAME", neighbors, standardize },
-          ...{ sweep: false, localPermutations: 9_999 },
-        });
-        const { moranI } = results.runs[0].global;
-        const want = expected[name];
-        assertClose(moranI.value!, want.I, 1e-9);
-        assertClose(moranI.expected!, want.I_E, 1e-9);
-        assertClose(moranI.varianceNormality!, want.I_var_normality, 1e-9);
-        assertClose(moranI.varianceRandomization!, want.I_var_randomisation, 1e-9);
-        assertClose(moranI.z!, want.I_z_randomisation, 1e-9);
-      }
-    }));
-}
 
 /** A 5 × 5 grid whose value is its column; `half` is west or east. */
 const grid = gridLayer({ columns: 5, rows: 5 }, (at) => ({

@@ -11,6 +11,10 @@ const grid = gridLayer({ columns: 3, rows: 3 }, (at) => ({
   flat: 1,
   noted: at === 4 ? "n/k" : String(at),
   sparse: at < 2 ? at : null,
+  people: 100 + at,
+  half: at + 0.5,
+  below: at - 1,
+  none: 0,
 }));
 
 interface Fault {
@@ -181,6 +185,54 @@ const FAULTS: readonly Fault[] = [
     args: [...LAYER, "--join", "@/other.csv", "--value", "n", ...OUT],
     code: 2,
     says: /other\.csv without --on KEY/,
+  },
+  {
+    when: "neither a value nor a rate is given",
+    args: [...LAYER, ...OUT],
+    code: 2,
+    says: /--value FIELD, or --rate CASES\/POPULATION/,
+  },
+  {
+    when: "both a value and a rate are given",
+    args: [...LAYER, "--value", "rate", "--rate", "rate/people", ...OUT],
+    code: 2,
+    says: /both --value rate and --rate rate\/people/,
+  },
+  {
+    when: "the population field of a rate does not exist",
+    args: [...LAYER, "--rate", "rate/peopel", ...OUT],
+    code: 2,
+    says: /"peopel".*did you mean "people"/,
+  },
+  {
+    when: "counts are not whole",
+    args: [...LAYER, "--rate", "half/people", ...OUT],
+    code: 4,
+    says: /half.*row 1 .*0\.5.*whole/,
+  },
+  {
+    when: "a population is negative",
+    args: [...LAYER, "--rate", "rate/below", ...OUT],
+    code: 4,
+    says: /below.*row 1 .*-1.*0 or more/,
+  },
+  {
+    when: "all populations are zero",
+    args: [...LAYER, "--rate", "rate/none", ...OUT],
+    code: 4,
+    says: /rate\/none.*grid\.geojson.*0 of its 9 areas/,
+  },
+  {
+    when: "a rate has no cases anywhere",
+    args: [...LAYER, "--rate", "none/people", ...OUT],
+    code: 4,
+    says: /none\/people.*none of its 9 areas has any cases/,
+  },
+  {
+    when: "a value has no logarithm",
+    args: [...LAYER, "--value", "rate", "--transform", "log", ...OUT],
+    code: 4,
+    says: /--transform log.*above 0.*row 1 \(_row 0\) of field rate holds 0/,
   },
   {
     when: "a filter cannot be read",

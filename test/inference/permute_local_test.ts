@@ -1,7 +1,7 @@
 import assert from "node:assert/strict";
 import { permuteLocalMoran } from "../../lib/inference/permute_local.ts";
 import { twoSidedP } from "../../lib/inference/p_value.ts";
-import { countsOf } from "../../lib/inference/test_local.ts";
+import { countsOf } from "../../lib/inference/sum_counts.ts";
 import { TAIL_HITS } from "../../lib/inference/weighed_job.ts";
 import { UnfitDataError, UsageError } from "../../lib/layer/errors.ts";
 import type { Weights } from "../../lib/weights/weights.ts";

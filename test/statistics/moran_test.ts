@@ -11,6 +11,7 @@ import {
   normalNumbers,
   unequalWeights,
 } from "../support/maps.ts";
+import { NC_WEIGHTS, ncVariables } from "../support/nc_variables.ts";
 import { ncWeights } from "../support/nc_weights.ts";
 import {
   numberColumn,
@@ -20,35 +21,6 @@ import {
   weightsOfListFile,
   weightsOfMatrix,
 } from "../support/reference.ts";
-
-const NC_WEIGHTS = [
-  "band30_row",
-  "band30_unscaled",
-  "bisquare_40_row",
-  "cressie_chan_unscaled",
-  "epanechnikov_40_row",
-  "gauss_h25_cut60_row",
-  "invd1_60mi_row",
-  "invd1_60mi_unscaled",
-  "invd2_60mi_row",
-  "knn4_centroid_row",
-  "queen_row",
-  "queen_unscaled",
-  "rook_unscaled",
-];
-
-function ncVariables(year: "74" | "79"): Record<string, Float64Array> {
-  const deaths = numberColumn("nc.csv", `SID${year}`),
-    births = numberColumn("nc.csv", `BIR${year}`);
-  const nonWhite = numberColumn("nc.csv", `NWBIR${year}`);
-  return {
-    [`rate${year}`]: deaths.map((s, i) => 1000 * s / births[i]),
-    [`ft${year}`]: deaths.map((s, i) =>
-      Math.sqrt(1000) * (Math.sqrt(s / births[i]) + Math.sqrt((s + 1) / births[i]))
-    ),
-    [`nw${year}`]: nonWhite.map((s, i) => s / births[i]),
-  };
-}
 
 function assertMoments(
   values: Float64Array,

@@ -154,6 +154,7 @@ function testedAreas(
       if (q[at] > 0.15) return "quiet";
       return agree[at] >= 0.8 ? "steady" : agree[at] >= 0.5 ? "mostly" : "fragile";
     }, null),
+    rates: null,
   };
 }
 

@@ -105,6 +105,7 @@ function runOf(areas: AreaResults, { moran, weights, counts, significant }: Part
       min: Math.min(...values),
       max: Math.max(...values),
     },
+    transform: "none" as const,
     global: {
       moranI: {
         value: moran.value,
@@ -120,6 +121,7 @@ function runOf(areas: AreaResults, { moran, weights, counts, significant }: Part
         pInterval: [0, 0.0106] as [number, number],
         alternative: "two-sided" as const,
       },
+      ebIndex: null,
     },
     reference: {
       mean: moran.expected,
@@ -149,6 +151,7 @@ function runOf(areas: AreaResults, { moran, weights, counts, significant }: Part
       significant,
       counts,
     },
+    rate: null,
   };
 }
 

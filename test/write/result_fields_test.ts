@@ -16,6 +16,7 @@ const areas: AreaResults = {
   sig: [true, null],
   agree: null,
   steady: null,
+  rates: null,
 };
 
 Deno.test("resultFields() puts the indicator's name in front of every finding", () => {
@@ -50,4 +51,21 @@ Deno.test("resultFields() adds agreement and steadiness when there was a sweep",
   const swept = { ...areas, agree: Float64Array.of(1, NaN), steady: ["steady", null] as const };
   const names = resultFields(swept, []).columns.map(({ name }) => name);
   assert.deepEqual(names.slice(-2), ["damp_agree", "damp_steady"]);
+});
+
+Deno.test("resultFields() adds the rates when the indicator is one", () => {
+  const rates = {
+    rate: Float64Array.of(12, NaN),
+    shrunk: Float64Array.of(11, NaN),
+    shrunkLocal: Float64Array.of(10, NaN),
+    funnel: ["above 95", null] as const,
+  };
+  const columns = resultFields({ ...areas, rates }, ["damp_rate"]).columns.slice(-4);
+  assert.deepEqual(columns.map(({ name }) => name), [
+    "damp_rate_2",
+    "damp_shrunk",
+    "damp_shrunk_local",
+    "damp_funnel",
+  ]);
+  assert.deepEqual(columns.map(({ values }) => values), Object.values(rates));
 });
