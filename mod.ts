@@ -82,6 +82,33 @@ export type { Weights } from "./lib/weights/weights.ts";
 export { type MoranI, moranI } from "./lib/statistics/moran.ts";
 export { type LocalMoran, localMoran } from "./lib/statistics/local_moran.ts";
 export type { Quadrant } from "./lib/statistics/quadrant.ts";
+export { type GearyC, gearyC } from "./lib/statistics/geary.ts";
+export { type LocalGeary, localGeary } from "./lib/statistics/local_geary.ts";
+export { type GetisOrdG, getisOrdG } from "./lib/statistics/getis_ord_g.ts";
+export { gi, giStar, type GiStarOptions } from "./lib/statistics/gi.ts";
+export { giCritical } from "./lib/statistics/gi_critical.ts";
+export {
+  type JoinCount,
+  type JoinCountOptions,
+  type JoinCounts,
+  joinCounts,
+} from "./lib/statistics/join_counts.ts";
+export type { JoinMoments } from "./lib/statistics/join_moments.ts";
+export { type LocalJoinCount, localJoinCount } from "./lib/statistics/local_join_count.ts";
+export { type BivariateMoranI, bivariateMoranI } from "./lib/statistics/bivariate_moran.ts";
+export {
+  type LocalBivariateMoran,
+  localBivariateMoran,
+} from "./lib/statistics/local_bivariate_moran.ts";
+export { type LeeL, leeL, type LeeOptions } from "./lib/statistics/lee.ts";
+export {
+  type Coefficient,
+  type LeastSquares,
+  leastSquares,
+  type Predictor,
+} from "./lib/statistics/least_squares.ts";
+export { type ResidualMoranI, residualMoranI } from "./lib/statistics/residual_moran.ts";
+export { correlogram, type CorrelogramStep } from "./lib/statistics/correlogram.ts";
 
 export type { PermuteOptions } from "./lib/inference/options.ts";
 export { type GlobalReference, permuteMoran } from "./lib/inference/permute_global.ts";

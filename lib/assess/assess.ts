@@ -75,6 +75,7 @@ export async function assess(path: string, options: AssessOptions): Promise<Asse
     withoutMetric: study.laid.withoutMetric,
     sweep: plan.sweep,
     cutLinks: cutLinksOf(study),
+    weightsUnused: plan.weights !== "given" && study.main.topology.given !== undefined,
     test,
   });
   return {

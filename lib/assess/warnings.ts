@@ -25,6 +25,8 @@ export interface WarningInput {
   readonly sweep: boolean;
   /** Links that `--where` cut; 0 without a filter. */
   readonly cutLinks: number;
+  /** Whether the links came with weights that the plan does not use. */
+  readonly weightsUnused: boolean;
   readonly test: LocalTest;
 }
 
@@ -43,41 +45,66 @@ function joinWarnings(join: JoinReport | null): string[] {
   if (!join) return [];
   const warnings: string[] = [];
   const list = (keys: readonly string[]) =>
-    keys.slice(0, 5).join(", ") + (keys.length > 5 ? ", …" : "");
+    keys.slice(0, 5).map(shownKey).join(", ") + (keys.length > 5 ? ", …" : "");
   if (join.layerOnlyCount > 0) {
-    warnings.push(
-      `${join.layerOnlyCount} areas have no row in ${join.table} (${list(join.layerOnly)})`,
-    );
+    const areas = counted(join.layerOnlyCount, "area has", "areas have");
+    warnings.push(`${areas} no row in ${join.table} (${list(join.layerOnly)})`);
   }
   if (join.tableOnlyCount > 0) {
-    warnings.push(
-      `${join.tableOnlyCount} rows of ${join.table} match no area (${list(join.tableOnly)})`,
-    );
+    const [rows, match] = join.tableOnlyCount === 1 ? ["row", "matches"] : ["rows", "match"];
+    const keys = list(join.tableOnly);
+    warnings.push(`${join.tableOnlyCount} ${rows} of ${join.table} ${match} no area (${keys})`);
   }
   return join.hint ? [...warnings, join.hint] : warnings;
 }
 
-function neighborWarnings({ summary, cutLinks, used }: WarningInput): string[] {
+/** In quotes where spaces at an end would not be seen. */
+function shownKey(key: string): string {
+  return key === key.trim() ? key : `"${key}"`;
+}
+
+function counted(count: number, one: string, more: string): string {
+  return `${count} ${count === 1 ? one : more}`;
+}
+
+function neighborWarnings(
+  { summary, cutLinks, used, weightsUnused }: WarningInput,
+): string[] {
   const warnings: string[] = [];
   if (used < FEW_AREAS) {
     warnings.push(`Only ${used} areas could be used; tests on so few find strong patterns only`);
   }
   if (summary.islands > 0) {
+    const areas = counted(summary.islands, "area has", "areas have");
     warnings.push(
-      `${summary.islands} areas have no neighbor under ${summary.rule}: they count in the mean but cannot be tested`,
+      `${areas} no neighbor under ${summary.rule}: counted in the mean but not tested`,
     );
   }
   if (cutLinks > 0) {
     warnings.push(
-      `The filter cut ${cutLinks} neighbor pairs at its border; --value-where would keep those neighbors`,
+      `The filter cut ${
+        counted(cutLinks, "neighbor pair", "neighbor pairs")
+      } at its border; --value-where would keep those neighbors`,
+    );
+  }
+  if (weightsUnused) {
+    warnings.push(
+      `${summary.rule} carries weights that were not used; --weights given would use them`,
     );
   }
   return warnings;
 }
 
-function metricWarnings({ metric, withoutMetric, sweep }: WarningInput): string[] {
+function metricWarnings(
+  { metric, withoutMetric, sweep, summary }: WarningInput,
+): string[] {
   if (withoutMetric !== null && sweep) {
     return [`No definition by distance was tried: ${withoutMetric}`];
+  }
+  if (metric?.unit === "map units" && summary.rule.includes("within:")) {
+    return [
+      `Coordinates were taken as stored: in ${summary.rule}, each meter stands for one map unit`,
+    ];
   }
   const distortion = metric?.worstDistortion ?? 0;
   if (distortion <= NOTABLE_DISTORTION) return [];

@@ -47,9 +47,27 @@ function settleTotal(
   { cumulated, stream }: { readonly cumulated: Float64Array; readonly stream: Stream },
 ): void {
   const all = cumulated[cumulated.length - 1];
-  let found = map.reduce((sum, count) => sum + count, 0);
-  for (; found < total; found++) map[above(cumulated, drawUniform(stream) * all)]++;
-  for (; found > total; found--) map[above(runningSums(map), drawBelow(stream, found))]--;
+  const found = map.reduce((sum, count) => sum + count, 0);
+  for (let missing = total - found; missing > 0; missing--) {
+    map[above(cumulated, drawUniform(stream) * all)]++;
+  }
+  if (found > total) takeAway(map, differentNumbers(found - total, found, stream));
+}
+
+/** `size` different whole numbers below `bound`, ascending, all sets equally likely. */
+function differentNumbers(size: number, bound: number, stream: Stream): number[] {
+  const chosen = new Set<number>();
+  while (chosen.size < size) chosen.add(drawBelow(stream, bound));
+  return [...chosen].sort((a, b) => a - b);
+}
+
+/** Takes away the cases with these numbers, all cases counted from area to area; writes into the map. */
+function takeAway(map: Float64Array, numbers: readonly number[]): void {
+  let end = 0, next = 0;
+  for (let i = 0; i < map.length && next < numbers.length; i++) {
+    end += map[i];
+    for (; numbers[next] < end; next++) map[i]--;
+  }
 }
 
 /** Position of the first entry above `x`; the last one where rounding leaves none. */

@@ -11,7 +11,6 @@ import { ruleText } from "./rule_text.ts";
 import { groundSources, type Sources } from "./sources.ts";
 import { stepsApart } from "./steps.ts";
 import type { Topology } from "./topology.ts";
-import { linkWithin } from "./within.ts";
 
 export type { Ground } from "./ground.ts";
 
@@ -59,7 +58,7 @@ const COMBINE = { union, intersection, difference } as const;
 function linkRule(rule: Rule, sources: Sources, build: Build): Topology {
   if (isCombination(rule)) return COMBINE[rule.kind](build(rule.left), build(rule.right));
   const { islands, ...without } = rule;
-  if (islands) return linkIslands(build(without), () => sources.nearest(1).topology);
+  if (islands) return linkIslands(build(without), () => sources.space().nearest(1).topology);
   return linkTerm(rule, sources, build);
 }
 
@@ -77,13 +76,11 @@ function linkTerm(rule: Term | Group, sources: Sources, build: Build): Topology 
     case "same":
       return sources.amongUsable(applyOptions(sources.blocks(rule.field), rule));
     case "nearest":
-      return applyOptions(sources.nearest(rule.count).topology, rule);
-    case "within": {
-      const band = linkWithin(sources.index(), sources.usable, rule.distance.meters);
-      return applyOptions(band, rule);
-    }
+      return applyOptions(sources.space().nearest(rule.count).topology, rule);
+    case "within":
+      return applyOptions(sources.space().within(rule.distance.meters), rule);
     default:
-      return applyOptions(sources.pointGraph(rule.kind), rule);
+      return applyOptions(sources.space().graph(rule.kind), rule);
   }
 }
 

@@ -28,6 +28,8 @@ export interface NeighborSummary {
   oneWayLinks: number;
   /** In meters (or map units with a planar metric); null without distances. */
   longestLink: number | null;
+  /** Directed links as a share of all there could be; null with fewer than two areas. */
+  density: number | null;
   /** How many areas have how many neighbors, ascending. */
   neighborCounts: { neighbors: number; areas: number }[];
 }
@@ -36,14 +38,14 @@ export interface NeighborSummary {
 export interface DescribeOptions {
   /** The rule as text. @default "" */
   readonly rule?: string;
-  /** x and y of each area, for the longest link. @default null */
-  readonly points?: Float64Array | null;
+  /** Distance between two areas by position, for the longest link. @default null */
+  readonly distance?: ((i: number, j: number) => number) | null;
 }
 
 /** Describes a topology. Cost: a few passes over the links. */
 export function describeTopology(
   topology: Topology,
-  { rule = "", points = null }: DescribeOptions = {},
+  { rule = "", distance = null }: DescribeOptions = {},
 ): NeighborSummary {
   const areas = topology.offsets.length - 1;
   const links = topology.indices.length;
@@ -59,7 +61,8 @@ export function describeTopology(
     minNeighbors: neighborCounts[0]?.neighbors ?? 0,
     maxNeighbors: neighborCounts.at(-1)?.neighbors ?? 0,
     oneWayLinks: links - bothWays,
-    longestLink: points && longest(linkDistances(topology, points)),
+    longestLink: distance && longest(linkDistances(topology, distance)),
+    density: areas > 1 ? links / (areas * (areas - 1)) : null,
     neighborCounts,
   };
 }

@@ -5,23 +5,26 @@
  */
 import { joinSets, singleSets } from "./disjoint_sets.ts";
 import { distanceBetween } from "./distance_between.ts";
-import { nearestTable } from "./nearest_table.ts";
+import { type NearestTable, nearestTables } from "./nearest_table.ts";
 import { distinctPlaces } from "./places.ts";
-import { indexPoints } from "./point_index.ts";
+import { indexPoints, type PointIndex } from "./point_index.ts";
 import { type RoundedPoints, roundPoints } from "./rounded_points.ts";
 import type { Topology } from "./topology.ts";
 import { triangulate } from "./triangulate.ts";
 
 /**
- * Length of every link, parallel to `indices`, in the units of the points; NaN where an end has no place.
+ * Length of every link, parallel to `indices`.
  *
- * @param points x and y of each area.
+ * @param distance Between two areas by position; NaN where one has no place.
  */
-export function linkDistances({ offsets, indices }: Topology, points: Float64Array): Float64Array {
+export function linkDistances(
+  { offsets, indices }: Topology,
+  distance: (i: number, j: number) => number,
+): Float64Array {
   const lengths = new Float64Array(indices.length);
   for (let i = 0; i + 1 < offsets.length; i++) {
     for (let link = offsets[i]; link < offsets[i + 1]; link++) {
-      lengths[link] = distanceBetween(points, i, indices[link]);
+      lengths[link] = distance(i, indices[link]);
     }
   }
   return lengths;
@@ -33,9 +36,22 @@ export function linkDistances({ offsets, indices }: Topology, points: Float64Arr
  */
 export function kNearestDistances(points: Float64Array, k: number): Float64Array {
   const index = indexPoints(roundPoints(points));
-  const distances = new Float64Array(points.length / 2).fill(NaN);
+  return distancesToNearest(index, points.length / 2, { k, tables: nearestTables(index) });
+}
+
+/**
+ * The same from an index and its tables.
+ *
+ * @param areas Number of points, located or not.
+ */
+export function distancesToNearest(
+  index: PointIndex,
+  areas: number,
+  { k, tables }: { readonly k: number; readonly tables: (width: number) => NearestTable },
+): Float64Array {
+  const distances = new Float64Array(areas).fill(NaN);
   if (k >= index.count) return distances;
-  const { near, width } = nearestTable(index, k);
+  const { near, width } = tables(k);
   for (let at = 0; at < index.count; at++) {
     distances[index.ids[at]] = distanceBetween(index.xy, at, near[at * width + k - 1]);
   }

@@ -4,8 +4,10 @@
  * @module
  */
 import type { FlatGeometry } from "../layer/geometry.ts";
+import type { Ellipsoid } from "../project/ellipsoid.ts";
 import type { ContiguityFinder } from "./contiguity.ts";
 import type { LinkTriples } from "./links.ts";
+import type { PointSpace } from "./point_space.ts";
 
 /** The kept areas of a layer (those that passed `--where`), and which of them are usable. */
 export interface Ground {
@@ -13,6 +15,10 @@ export interface Ground {
   readonly geometry: FlatGeometry | null;
   /** x and y of each area in a metric, NaN where it has no place; null where distance cannot be measured. */
   readonly points: Float64Array | null;
+  /** What distance is measured on where `points` are longitude and latitude. @default null, for the plane */
+  readonly ellipsoid?: Ellipsoid | null;
+  /** Distance between the usable areas, where it was opened before. @default made from `points` */
+  readonly space?: PointSpace | null;
   /** Number of kept areas. */
   readonly count: number;
   /** Mask over the kept areas: 1 where an area has a usable value. */

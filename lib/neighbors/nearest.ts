@@ -5,7 +5,7 @@
  */
 import { UnfitDataError } from "../layer/errors.ts";
 import { refuseTooMany, sortRow } from "./link_room.ts";
-import { type NearestTable, nearestTable } from "./nearest_table.ts";
+import { type NearestTable, nearestTables } from "./nearest_table.ts";
 import { grainsBetween, type PointIndex } from "./point_index.ts";
 import type { Topology } from "./topology.ts";
 
@@ -18,28 +18,32 @@ export interface NearestLinks {
 
 /**
  * A function that links each located point with its `count` nearest. Ties at the last place go to the
- * smaller position. The table of the largest count asked for so far is kept, and smaller ones are read from it.
+ * smaller position.
  *
  * Cost: see {@link nearestTable}.
  *
  * @param areas Number of areas, located or not; one without a point is linked with nobody.
+ * @param tables Where the nearest are looked up, to share what was found.
  */
 export function nearestFinder(
   index: PointIndex,
   areas: number,
+  tables: (width: number) => NearestTable = nearestTables(index),
 ): (count: number) => NearestLinks {
-  let table: NearestTable = { width: 0, near: new Uint32Array(0) };
   return (count) => {
-    if (count >= index.count) {
-      throw new UnfitDataError(
-        `Cannot link ${count} nearest neighbor${count === 1 ? "" : "s"} as the layer has only ` +
-          `${index.count} usable area${index.count === 1 ? "" : "s"}`,
-      );
-    }
-    const width = Math.min(count + 1, index.count - 1);
-    if (width > table.width) table = nearestTable(index, width);
+    refuseAbsent(count, index.count);
+    const table = tables(Math.min(count + 1, index.count - 1));
     return firstColumns(index, table, areas, count);
   };
+}
+
+/** Refuses to link more nearest than there are others. @throws {UnfitDataError} */
+export function refuseAbsent(count: number, located: number): void {
+  if (count < located) return;
+  throw new UnfitDataError(
+    `Cannot link ${count} nearest neighbor${count === 1 ? "" : "s"} as the layer has only ` +
+      `${located} usable area${located === 1 ? "" : "s"}`,
+  );
 }
 
 function firstColumns(

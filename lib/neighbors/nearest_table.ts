@@ -30,6 +30,15 @@ export function nearestTable(index: PointIndex, width: number): NearestTable {
   return { width, near };
 }
 
+/** A function that finds tables of at least a width; the widest so far is kept, and narrower ones read it. */
+export function nearestTables(index: PointIndex): (width: number) => NearestTable {
+  let table: NearestTable = { width: 0, near: new Uint32Array(0) };
+  return (width) => {
+    if (width > table.width) table = nearestTable(index, width);
+    return table;
+  };
+}
+
 /** Points at one place that are searched for one by one; with more, each search there would be slow. */
 const CROWD = 64;
 

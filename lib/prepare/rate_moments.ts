@@ -40,19 +40,23 @@ export interface RateMoments {
  */
 export function rateMoments(
   { cases, population }: RateCounts,
-  areas: Iterable<number> = cases.keys(),
+  areas?: ArrayLike<number>,
 ): RateMoments {
-  const members = [...areas];
+  const members = areas?.length ?? cases.length;
   let allCases = 0, all = 0;
-  for (const i of members) {
+  for (let at = 0; at < members; at++) {
+    const i = areas ? areas[at] : at;
     allCases += cases[i];
     all += population[i];
   }
   const rate = allCases / all;
   let squares = 0;
-  for (const i of members) squares += population[i] * (cases[i] / population[i] - rate) ** 2;
+  for (let at = 0; at < members; at++) {
+    const i = areas ? areas[at] : at;
+    squares += population[i] * (cases[i] / population[i] - rate) ** 2;
+  }
   const variance = squares / all;
-  return { rate, variance, between: Math.max(0, variance - rate * members.length / all) };
+  return { rate, variance, between: Math.max(0, variance - rate * members / all) };
 }
 
 /** Rates as they are: cases / population of each area. */

@@ -194,7 +194,8 @@ async function startGdal(): Promise<Gdal> {
   const [{ wasm, data }, start] = await Promise.all([readGdalAssets(), importFactory()]);
   const messages: string[] = [];
   const module = await start({
-    wasmBinary: wasm,
+    // As a buffer: emscripten would copy a view.
+    wasmBinary: exactBuffer(wasm),
     getPreloadedPackage: () => exactBuffer(data),
     print: (line: string) => messages.push(line),
     printErr: (line: string) => messages.push(line),

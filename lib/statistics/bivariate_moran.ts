@@ -28,8 +28,8 @@ export interface BivariateMoranI {
 }
 
 /**
- * Bivariate Moran's I (Wartenberg 1985): does a high `x` go with high `y` next door? One wants it for
- * then-and-now questions and for spill-over from one field to another.
+ * Bivariate Moran's I (Wartenberg 1985, Geographical Analysis 17:263-283): does a high `x` go with high
+ * `y` next door? One wants it for then-and-now questions and for spill-over from one field to another.
  *
  * I = n/S0 · Σ w_ij zx_i zy_j / sqrt(Σ zx² Σ zy²). Positive: x goes with the neighbors' y; negative:
  * against it. Not symmetric: x with neighbors' y is not y with neighbors' x unless the weights are.

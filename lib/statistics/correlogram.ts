@@ -18,9 +18,10 @@ export interface CorrelogramStep {
 }
 
 /**
- * Spatial correlogram (Sokal & Oden 1978): Moran's I of the same values for each of several weights, one for
- * every band of distance, order of contiguity or number of neighbors. One wants it to see how far
- * likeness reaches: I falls with distance and meets its expectation where it ends.
+ * Spatial correlogram (Sokal & Oden 1978, Biological Journal of the Linnean Society 10:199-228):
+ * Moran's I of the same values for each of several weights, one for every band of distance, order of
+ * contiguity or number of neighbors. One wants it to see how far likeness reaches: I falls with
+ * distance and meets its expectation where it ends.
  *
  * `bands` are exclusive (a pair is in one of them) where steps should be read as distances; nothing here
  * depends on it. `values` has one finite number for each area, and all bands are of these areas. The

@@ -27,16 +27,16 @@ export interface GearyC {
 }
 
 /**
- * Geary's c (Geary 1954): the mean squared difference between neighbors, against that between any two
- * areas. It looks at small differences nearby where Moran's I looks at common departure from the mean,
- * so a few extreme values weigh more on c.
+ * Geary's c (Geary 1954, The Incorporated Statistician 5:115-145): the mean squared difference between
+ * neighbors, against that between any two areas. It looks at the differences between neighbors where
+ * Moran's I looks at their common departure from the mean, so local unevenness counts more and level less.
  *
  * c = (n - 1) / (2 S0) · Σ w_ij (x_i - x_j)² / Σ (x - x̄)². Range 0 to well above 1; 1 is "no pattern".
  * The sign of z is turned around, so that positive means clustering for every statistic here. `values`
  * has one finite number for each area; c is the same for a + b·x. Areas without a neighbor stay in n
  * and in the mean.
  *
- * Moments: Cliff & Ord 1981, Spatial Processes, section 1.5. Where everybody is everybody's neighbor c
+ * Moments: Cliff & Ord 1981, Spatial Processes, p. 21. Where everybody is everybody's neighbor c
  * cannot vary: both variances are 0 and the z are NaN. Cost: one pass over the links, and one for S1.
  *
  * @throws UnfitDataError for fewer than 3 areas, values all equal or not finite, and weights whose sum

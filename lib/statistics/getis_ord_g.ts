@@ -25,10 +25,10 @@ export interface GetisOrdG {
 }
 
 /**
- * Getis and Ord's G (Getis & Ord 1992): the share of all products of two areas' values that falls on
- * neighbors. One wants it to tell whether high values or low ones cluster, which Moran's I cannot:
- * G above its expectation means high values next to high ones, below it low next to low (or high ones
- * kept apart).
+ * Getis and Ord's G (Getis & Ord 1992, Geographical Analysis 24:189-206): the share of all products of
+ * two areas' values that falls on neighbors. One wants it to tell whether high values or low ones
+ * cluster, which Moran's I cannot: G above its expectation means high values next to high ones, below
+ * it low next to low (or high ones kept apart).
  *
  * G = Σ w_ij x_i x_j / Σ_{i≠j} x_i x_j, with the weights as they are. `values` has one finite number
  * of 0 or more for each area, on a scale with a true zero: G is the same for b·x, but not for a + x.

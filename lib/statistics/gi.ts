@@ -18,15 +18,15 @@ export interface GiStarOptions {
 }
 
 /**
- * Standardized Gi of every area (Ord & Getis 1995): how far the neighbors' weighted sum lies above or
- * below that of randomly chosen areas. Positive: surrounded by high values; negative: by low ones. The
- * area itself does not count.
+ * Standardized Gi of every area (Ord & Getis 1995, Geographical Analysis 27:286-306): how far the
+ * neighbors' weighted sum lies above or below that of randomly chosen areas. Positive: surrounded by
+ * high values; negative: by low ones. The area itself does not count.
  *
- * (Σ_j w_ij x_j - W x̄(i)) / (s(i) sqrt(((n - 1) Σw² - W²) / (n - 2))), mean and standard deviation (divisor
- * n - 1) over the other n - 1 areas: the number of conditional standard deviations from the
+ * (Σ_j w_ij x_j - W x̄(i)) / (s(i) sqrt(((n - 1) Σw² - W²) / (n - 2))), mean and standard deviation
+ * (divisor n - 1) over the other n - 1 areas: the number of conditional standard deviations from the
  * conditional mean. Scaling a row changes nothing, nor does a + b·x for b above 0. NaN for an area that
- * is alone or whose neighbors are all other areas with equal weights, as then nothing can vary.
- * Cost: one pass over the links.
+ * is alone or whose neighbors are all other areas with equal weights, as then nothing can vary. Cost:
+ * one pass over the links.
  *
  * @returns Length n, in standard deviations.
  * @throws UnfitDataError for fewer than 3 areas and for values all equal or not finite.

@@ -47,9 +47,10 @@ export interface JoinCounts {
 }
 
 /**
- * Join counts for every pair of classes (Cliff & Ord 1981, Spatial Processes, sections 1.4 and 2.3;
- * the joins within a class first by Moran 1948). More joins within a class than expected: that class is
- * clustered; more joins between two classes: they seek each other's company.
+ * Join counts for every pair of classes (Cliff & Ord 1981, Spatial Processes, pp. 19-20; for two
+ * classes Moran 1948, Journal of the Royal Statistical Society B 10:243-251). More joins within a class
+ * than expected: that class is clustered; more joins between two classes: they seek each other's
+ * company.
  *
  * A pair of areas is joined when either is the other's neighbor, and counts once, without any weight.
  * `classes` holds one name for each area; areas without a class are left out before. Each z is

@@ -20,7 +20,9 @@ export interface JoinStructure {
 
 /** Moments of one join count. */
 export interface JoinMoments {
+  /** Mean of the count, in joins. */
   readonly expected: number;
+  /** Variance of the count; 0 where it cannot vary. */
   readonly variance: number;
   /** (joins - expected) / sqrt(variance); NaN where the variance is 0. */
   readonly z: number;
@@ -28,7 +30,7 @@ export interface JoinMoments {
 
 /**
  * Moments over all orders of the classes found ("nonfree" sampling, without replacement; Cliff & Ord
- * 1981, section 2.3). `first` and `second` are the numbers of areas of the two classes; `second` is null for
+ * 1981, pp. 19-20). `first` and `second` are the numbers of areas of the two classes; `second` is null for
  * joins within one class. Exact, as enumeration shows. Cost: constant.
  *
  * @example
@@ -63,7 +65,7 @@ export function nonfreeMoments(
 
 /**
  * Moments when each area draws its class independently ("free" sampling, with replacement; Cliff & Ord
- * 1981, section 2.3). `first` and `second` are the probabilities of the two classes; `second` is null for
+ * 1981, pp. 19-20). `first` and `second` are the probabilities of the two classes; `second` is null for
  * joins within one class. Exact where the probabilities are known beforehand; with shares taken from the
  * same map it overstates the variance. Cost: constant.
  *

@@ -10,7 +10,9 @@ import { dot } from "./dot.ts";
 
 /** A field that explains: one finite number for each area. */
 export interface Predictor {
+  /** What errors and the regression table call it. */
   readonly name: string;
+  /** Length n, in any unit. */
   readonly values: Float64Array;
 }
 
@@ -73,46 +75,18 @@ export function leastSquares(
   checkSize(n, predictors);
   const y = centerAndScale(values, "the value");
   const columns = predictors.map(({ name, values }) => centerAndScale(values, `"${name}"`));
-  const { directions, lengths, turns } = decompose(columns, predictors);
-  const scores = directions.map((direction) => dot(direction, y.scaled));
-
-  const fittedScore = new Float64Array(n);
-  directions.forEach((direction, k) => {
-    direction.forEach((each, i) => fittedScore[i] += scores[k] * each);
-  });
-  const residuals = y.scaled.map((score, i) => y.sd * (score - fittedScore[i]));
+  const parts = decompose(columns, predictors);
+  const scores = parts.directions.map((direction) => dot(direction, y.scaled));
+  const residuals = residualsOf(y, parts.directions, scores);
   const residualVariance = dot(residuals, residuals) / (n - predictors.length - 1);
-
-  // Slope j in units of the predictor is Σ_k turn_jk score_k / length_k, times the ratio of the units.
-  const slopes = columns.map(({ sd }, j) =>
-    compensatedSum(scores.map((score, k) => turns[j][k] * score / lengths[k])) * y.sd / sd
-  );
-  const loadings = columns.map(({ sd }, j) =>
-    lengths.map((length, k) => turns[j][k] / (length * sd))
-  );
-  const constantLoading = lengths.map((_, k) =>
-    compensatedSum(columns.map(({ mean }, j) => mean * loadings[j][k]))
-  );
-  const errorOf = (variance: number) => Math.sqrt(residualVariance * variance);
-  const constant = {
-    name: null,
-    value: y.mean - compensatedSum(slopes.map((slope, j) => slope * columns[j].mean)),
-    error: errorOf(1 / n + sumOfSquares(constantLoading)),
-  };
+  const names = predictors.map(({ name }) => name);
   return {
-    coefficients: [
-      constant,
-      ...predictors.map(({ name }, j) => ({
-        name,
-        value: slopes[j],
-        error: errorOf(sumOfSquares(loadings[j])),
-      })),
-    ],
+    coefficients: coefficientsOf(names, columns, parts, { y, scores, residualVariance }),
     residuals,
     fitted: values.map((value, i) => value - residuals[i]),
     residualVariance,
     rSquared: sumOfSquares(scores) / n,
-    basis: [new Float64Array(n).fill(1 / Math.sqrt(n)), ...directions],
+    basis: [new Float64Array(n).fill(1 / Math.sqrt(n)), ...parts.directions],
   };
 }
 
@@ -192,6 +166,52 @@ function decompose(columns: readonly Scaled[], predictors: readonly Predictor[])
     lengths,
     turns,
   };
+}
+
+/** What is left of the value when its share in every direction is taken away, in the value's own unit. */
+function residualsOf(
+  y: Scaled,
+  directions: readonly Float64Array[],
+  scores: readonly number[],
+): Float64Array {
+  return y.scaled.map((score, i) => {
+    let left = score;
+    for (let k = 0; k < directions.length; k++) left -= scores[k] * directions[k][i];
+    return y.sd * left;
+  });
+}
+
+/** The regression table in the units of the fields, from the fit in directions at right angles. */
+function coefficientsOf(
+  names: readonly string[],
+  columns: readonly Scaled[],
+  { lengths, turns }: Decomposition,
+  fit: { y: Scaled; scores: readonly number[]; residualVariance: number },
+): Coefficient[] {
+  // loadings[j][k]: what a score of 1 in direction k adds to the slope of predictor j.
+  const loadings = columns.map(({ sd }, j) =>
+    lengths.map((length, k) => turns[j][k] / (length * sd))
+  );
+  const slopes = loadings.map((loading) =>
+    fit.y.sd * compensatedSum(loading.map((each, k) => each * fit.scores[k]))
+  );
+  const atMeans = lengths.map((_, k) =>
+    compensatedSum(columns.map(({ mean }, j) => mean * loadings[j][k]))
+  );
+  const errorOf = (variance: number) => Math.sqrt(fit.residualVariance * variance);
+  const constant = {
+    name: null,
+    value: fit.y.mean - compensatedSum(slopes.map((slope, j) => slope * columns[j].mean)),
+    error: errorOf(1 / fit.y.scaled.length + sumOfSquares(atMeans)),
+  };
+  return [
+    constant,
+    ...names.map((name, j) => ({
+      name,
+      value: slopes[j],
+      error: errorOf(sumOfSquares(loadings[j])),
+    })),
+  ];
 }
 
 function sumOfSquares(values: ArrayLike<number>): number {

@@ -35,11 +35,12 @@ export interface LeeL {
 }
 
 /**
- * Lee's L (Lee 2001): the cross-product of two smoothed fields, which is high only where the fields
- * go together and both are clustered. It separates "alike in each place" (r) from "alike as maps".
+ * Lee's L (Lee 2001, Journal of Geographical Systems 3:369-385): the cross-product of two smoothed
+ * fields, which is high only where the fields go together and both are clustered. It separates "alike
+ * in each place" (r) from "alike as maps".
  *
  * L = n / Σ_i (Σ_j w_ij)² · Σ_i (Σ_j w_ij zx_j)(Σ_j w_ij zy_j) / sqrt(Σ zx² Σ zy²). Positive: the smoothed
- * maps agree; negative: they mirror each other. Symmetric in x and y. Between about -1 and 1 where
+ * maps agree; negative: they mirror each other. Symmetric in x and y. Mostly between -1 and 1 where
  * rows sum to 1. Both fields have one finite number for each area; L is the same for a + b·x, b above 0.
  * Areas without a neighbor add nothing, unless they have a self-weight.
  *

@@ -21,6 +21,7 @@ export interface LocalMoran {
   readonly expected: Float64Array;
   /** Variance of `i` when the other n - 1 values are permuted. */
   readonly variance: Float64Array;
+  /** Corner of the Moran scatterplot, whatever the p. */
   readonly quad: readonly (Quadrant | null)[];
 }
 

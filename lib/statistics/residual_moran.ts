@@ -27,7 +27,7 @@ export interface ResidualMoranI {
 
 /**
  * Moran's I of the residuals of an ordinary least-squares fit, I = n/S0 · e'We / e'e, with the moments that
- * residuals have (Cliff & Ord 1981, Spatial Processes, section 8.3), which are not those of raw values:
+ * residuals have (Cliff & Ord 1981, Spatial Processes, p. 203), which are not those of raw values:
  * fitting makes residuals alike less often than chance would. Positive z: neighbors have residuals of the
  * same sign, so something clustered is missing from the fields.
  *

@@ -1,28 +1,20 @@
 /**
  * The main job against numbers from outside the project, the whole way: files in, neighbors by rule or list,
- * statistics out. Each case file in `testdata/cases` names its source and licence.
+ * statistics out. Each case file in `testdata/cases` names its source and license.
  */
 import assert from "node:assert/strict";
 import { assess } from "../../lib/assess/assess.ts";
 import type { AssessOptions } from "../../lib/assess/options.ts";
 import { assertClose } from "../support/close.ts";
-import { numberColumn, referenceCase, referenceText, textColumn } from "../support/reference.ts";
+import { ncVariables } from "../support/nc_variables.ts";
+import { referenceCase, referenceText, textColumn } from "../support/reference.ts";
 import { withFolder } from "../support/temp_folder.ts";
 
 const NC = new URL("../../testdata/data/nc.gpkg", import.meta.url).pathname;
 const FEW = { sweep: false, localPermutations: 999 } as const;
 
-const births = numberColumn("nc.csv", "BIR74");
-const deaths = numberColumn("nc.csv", "SID74");
-const nonwhite = numberColumn("nc.csv", "NWBIR74");
 /** The variables of the cases nc-*; the formulas stand in the cases. */
-const VARIABLES: Readonly<Record<string, Float64Array>> = {
-  rate74: deaths.map((count, i) => 1000 * count / births[i]),
-  ft74: deaths.map((count, i) =>
-    Math.sqrt(1000) * (Math.sqrt(count / births[i]) + Math.sqrt((count + 1) / births[i]))
-  ),
-  nw74: nonwhite.map((count, i) => count / births[i]),
-};
+const VARIABLES = ncVariables("74");
 
 /** A comma-separated text of columns; numbers in shortest form, so that they read back bit for bit. */
 function csvOf(columns: Readonly<Record<string, ArrayLike<number | string>>>): string {

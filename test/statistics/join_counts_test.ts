@@ -153,11 +153,13 @@ Deno.test("joinCounts() has the exact moments of all orders when there are three
 });
 
 Deno.test("joinCounts() counts a pair once when its link goes one way only", () => {
-  const oneWay = weightsOfMatrix([[0, 1, 0], [0, 0, 1], [0, 1, 0]]);
-  const found = joinCounts(["x", "y", "x"], oneWay);
-  assert.equal(found.joins, 2);
-  assert.equal(pairOf(found, "x", "y").joins, 2);
-  assert.deepEqual(found, joinCounts(["x", "y", "x"], chainWeights(3)));
+  const upward = weightsOfMatrix([[0, 1, 0], [0, 0, 1], [0, 1, 0]]);
+  const downward = weightsOfMatrix([[0, 0, 0], [1, 0, 1], [0, 1, 0]]);
+  const bothWays = joinCounts(["x", "y", "x"], chainWeights(3));
+  assert.equal(bothWays.joins, 2);
+  assert.equal(pairOf(bothWays, "x", "y").joins, 2);
+  assert.deepEqual(joinCounts(["x", "y", "x"], upward), bothWays);
+  assert.deepEqual(joinCounts(["x", "y", "x"], downward), bothWays);
 });
 
 Deno.test("joinCounts() has no z within a class of one member, and one for its joins with others", () => {

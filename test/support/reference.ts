@@ -1,5 +1,5 @@
 /**
- * Reference cases and data that the numbers are checked against: `testdata/` holds each with source and licence.
+ * Reference cases and data that the numbers are checked against: `testdata/` holds each with source and license.
  *
  * @module
  */

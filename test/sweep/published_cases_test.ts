@@ -85,7 +85,7 @@ Deno.test("runSweep() reproduces the published global I of every definition in o
   });
   assert.equal(results.definitions.length, definitions.length);
   for (const { rule, value } of results.definitions) {
-    // Source of each value: numpy dense matrices, named in the case file with its licence.
+    // Source of each value: numpy dense matrices, named in the case file with its license.
     const { expected, tolerance } = JSON.parse(await text(`cases/nc-global-${rule}.json`));
     const published = expected.rate74.I;
     assert.ok(
