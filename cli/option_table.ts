@@ -88,8 +88,29 @@ const neighborOptions: readonly OptionRow[] = [
   {
     flag: "metric",
     argument: "HOW",
-    text: 'How distance is measured: auto, planar, EPSG:N or a "proj string"',
+    text: 'How distance is measured: auto, planar, geodesic, EPSG:N or a "proj string"',
     default: "auto",
+  },
+  {
+    flag: "points",
+    argument: "X,Y",
+    text: "Two fields that hold a point for each area, in the layer's coordinates",
+    default: "points inside the areas",
+  },
+  {
+    flag: "weights",
+    argument: "KIND",
+    text:
+      "How much each neighbor counts: equal, inverse:P, exponential:D, gaussian:D, bisquare:D, " +
+      "triangular:D, epanechnikov:D (D a length or kN, each area's distance to its N-th nearest), " +
+      "boundary (shared length) or given (with the links of a file)",
+    default: "equal",
+  },
+  {
+    flag: "standardize",
+    argument: "HOW",
+    text: "How rows are scaled: row, none, total or variance",
+    default: "row",
   },
 ];
 
@@ -116,6 +137,10 @@ export const COMMANDS: readonly CommandRow[] = [
         argument: "N",
         text: "Show rates per so many of the population",
         default: "1000",
+      },
+      {
+        flag: "share",
+        text: "Nobody counts twice in the rate: cases are part of the population",
       },
       {
         flag: "name",
@@ -173,18 +198,6 @@ export const COMMANDS: readonly CommandRow[] = [
       },
       ...neighborOptions,
       {
-        flag: "weights",
-        argument: "KIND",
-        text: "How much each neighbor counts: equal",
-        default: "equal",
-      },
-      {
-        flag: "standardize",
-        argument: "HOW",
-        text: "How rows are scaled: row or none",
-        default: "row",
-      },
-      {
         flag: "permutations",
         argument: "N",
         text: "Permutations of the global test",
@@ -239,20 +252,16 @@ export const COMMANDS: readonly CommandRow[] = [
   {
     name: "neighbors",
     argument: { name: "LAYER", text: "Any vector layer, or a CSV with x/y or WKT" },
-    text: "Build the links, describe them and write them as a table",
+    text: "Build the links, describe them and write them",
     options: [
       ...layerOptions,
       ...neighborOptions,
       {
-        flag: "standardize",
-        argument: "HOW",
-        text: "How rows are scaled: row or none",
-        default: "row",
-      },
-      {
         flag: "out",
-        argument: "FILE.csv",
-        text: "Table from,to,weight,distance; one row per directed link",
+        argument: "FILE",
+        text:
+          "Write the links, format by the ending: .csv as from,to,weight,distance, else lines " +
+          "(.fgb, .gpkg, .geojson, …); links:FILE reads them back",
       },
       { flag: "force", text: "Replace the file" },
       { flag: "json", text: "Print the description as JSON" },

@@ -4,6 +4,8 @@
  * @module
  */
 import { join } from "node:path";
+import { definitionsTried } from "../lib/sweep/verdict_input.ts";
+import { reachText } from "./reach_text.ts";
 import type { Results, Run } from "../lib/write/results.ts";
 
 /** Warnings beyond these are counted only; the report has them all. */
@@ -34,7 +36,8 @@ export function summaryText(
   ].join("\n");
 }
 
-function keyLines({ layer, sweep }: Results, { neighbors, global, local, rate }: Run): string[] {
+function keyLines({ layer, sweep }: Results, run: Run): string[] {
+  const { neighbors, global, local, rate } = run;
   const { moranI } = global;
   const lines = [
     `Areas      ${layer.used} of ${layer.features} used${leftOutText(layer.leftOut)}`,
@@ -42,6 +45,7 @@ function keyLines({ layer, sweep }: Results, { neighbors, global, local, rate }:
       shortNumber(neighbors.meanNeighbors)
     } ` +
     `on average, ${neighbors.islands} alone`,
+    wrapped(reachLine(layer, run), "           "),
     `Moran's I  ${shortNumber(moranI.value)} (expected ${shortNumber(moranI.expected)}), ` +
     `p ${pText(moranI.p)}, ${moranI.permutations} permutations`,
     `Flagged    ${local.significant} of ${local.tested} areas at ${local.level} (${local.adjust})${
@@ -52,7 +56,7 @@ function keyLines({ layer, sweep }: Results, { neighbors, global, local, rate }:
   if (sweep) {
     const { joint, stability } = sweep;
     lines.push(
-      `Sweep      ${sweep.definitions.length} definitions, I from ${
+      `Sweep      ${definitionsTried(sweep)} definitions, I from ${
         shortNumber(joint.smallest)
       } to ` +
         `${shortNumber(joint.largest)}, joint p ${pText(joint.p)}; ` +
@@ -60,6 +64,20 @@ function keyLines({ layer, sweep }: Results, { neighbors, global, local, rate }:
     );
   }
   return lines;
+}
+
+function reachLine({ metricCrs }: Results["layer"], { neighbors, diagnostics }: Run): string {
+  const { components, oneWayLinks, longestLink } = neighbors;
+  const { noneAlone, oneComponent } = diagnostics;
+  const unit = metricCrs?.unit ?? "m";
+  const pieces = `${components} connected ${components === 1 ? "piece" : "pieces"}`;
+  const longest = longestLink === null ? "" : `, longest link ${shortNumber(longestLink)} ${unit}`;
+  const reach = noneAlone === null || oneComponent === null
+    ? ""
+    : `; within ${reachText(noneAlone, unit)} nobody is alone, within ${
+      reachText(oneComponent, unit)
+    } all hang together`;
+  return `Links      ${pieces}, ${oneWayLinks} one-way links${longest}${reach}`;
 }
 
 function rateLine(rate: NonNullable<Run["rate"]>, level: number): string {
@@ -74,7 +92,7 @@ function rateLine(rate: NonNullable<Run["rate"]>, level: number): string {
 
 function leftOutText(leftOut: Results["layer"]["leftOut"]): string {
   const parts = leftOut.map(({ reason, count }) => `${count} ${reason}`);
-  return parts.length ? ` (left out: ${parts.join(", ")})` : "";
+  return parts.length ? ` (not tested: ${parts.join(", ")})` : "";
 }
 
 function classText(counts: Readonly<Record<string, number>>): string {

@@ -3,8 +3,10 @@
  *
  * @module
  */
+import { nearMissText } from "../../lib/assess/diagnose_ground.ts";
 import { type FieldSummary, inspect, type Inspection } from "../../lib/assess/inspect.ts";
 import { prettyJson } from "../../lib/write/record.ts";
+import { reachText } from "../reach_text.ts";
 import type { OptionValues } from "../option_values.ts";
 import { processTerminal, type Terminal } from "../terminal.ts";
 
@@ -22,6 +24,7 @@ function inspectionLines(found: Inspection, { bold }: Terminal): string[] {
     ...otherLayers(found),
     `CRS        ${found.crs ?? "none declared"}`,
     `Geometry   ${healthText(found.geometry)}`,
+    ...boundaryLines(found),
     ...distanceLines(found),
     "",
     ...fieldLines(found.fields),
@@ -56,22 +59,29 @@ function otherLayers({ layers, layer }: Inspection): string[] {
   return others.length ? [`Also here  ${others.join(", ")}`] : [];
 }
 
+function boundaryLines({ boundaries, sharingPlaces }: Inspection): string[] {
+  const misses = nearMissText(boundaries);
+  return [
+    ...(boundaries
+      ? [
+        `Boundaries ${misses ?? "no pair of areas nearly touches"}${
+          boundaries.overlapPairs > 0 ? `; ${boundaries.overlapPairs} pairs overlap` : ""
+        }`,
+      ]
+      : []),
+    ...(sharingPlaces ? [`Places     ${sharingPlaces} areas share their point with another`] : []),
+  ];
+}
+
 function distanceLines({ distances }: Inspection): string[] {
   if (!distances) {
     return ["Distances  none measured (fewer than two areas, or no CRS fits the extent)"];
   }
   const { noneAlone, oneComponent, unit } = distances;
   return [
-    `Distances  within ${lengthText(noneAlone, unit)} no area is alone; ` +
-    `within ${lengthText(oneComponent, unit)} the map hangs together`,
+    `Distances  within ${reachText(noneAlone, unit)} no area is alone; ` +
+    `within ${reachText(oneComponent, unit)} the map hangs together`,
   ];
-}
-
-/** Rounded up in the fourth digit, so that the printed length still reaches. */
-function lengthText(length: number, unit: string): string {
-  if (length === 0) return `0 ${unit}`;
-  const step = 10 ** (Math.floor(Math.log10(length)) - 3);
-  return `${Number((Math.ceil(length / step) * step).toPrecision(4))} ${unit}`;
 }
 
 function fieldLines(fields: readonly FieldSummary[]): string[] {

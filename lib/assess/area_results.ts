@@ -44,9 +44,9 @@ const CLASS_OF: Readonly<Record<Quadrant, AreaClass>> = {
 export function areaResults(rows: AreaRows, found: LocalFindings): AreaResults {
   const { used, leftOut } = rows;
   const { local } = found;
-  const numbers = (values: Float64Array) => spreadNumbers(values, used, leftOut.length);
-  const texts = <T>(values: ArrayLike<T>, fill: T) =>
-    spread(values, { used, count: leftOut.length, fill });
+  const places = { used, count: leftOut.length };
+  const numbers = (values: Float64Array) => spreadNumbers(values, places);
+  const texts = <T>(values: ArrayLike<T>, fill: T) => spread(values, { ...places, fill });
   const tested = (at: number) => !Number.isNaN(found.p[at]);
   const alone = (at: number) => Number.isNaN(local.i[at]);
   const classes = Array.from(used, (row, at): AreaClass => {

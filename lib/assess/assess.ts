@@ -62,7 +62,7 @@ export async function assess(path: string, options: AssessOptions): Promise<Asse
       used: indicator.used,
       values: indicator.all,
       leftOut: indicator.leftOut,
-      rates: found.rate && areaRates(found.rate, indicator.used, layer.count),
+      rates: found.rate && areaRates(found.rate, { used: indicator.used, count: layer.count }),
     },
     { local, ...test, agree: swept?.outcome.agree ?? null, steady: swept?.outcome.steady ?? null },
   );
@@ -70,7 +70,9 @@ export async function assess(path: string, options: AssessOptions): Promise<Asse
     notes: [...notes, ...indicator.notes, ...(swept?.notes ?? [])],
     join,
     used: indicator.used.length,
+    rule: study.rule,
     summary: study.main.summary,
+    diagnostics: study.diagnostics,
     metric: study.laid.metric,
     withoutMetric: study.laid.withoutMetric,
     sweep: plan.sweep,
@@ -84,7 +86,7 @@ export async function assess(path: string, options: AssessOptions): Promise<Asse
     names,
     results: resultsOf(study, found, { areas, join, warnings }),
     areas,
-    links: linkTable(study.main, { used: indicator.used, points: study.builder.points }),
+    links: linkTable(study.main, { used: indicator.used, space: study.builder.space }),
     places: spreadPlaces(study.laid.places, indicator.kept, layer.count),
     inputs: [...inputs, ...study.laid.inputs],
   };

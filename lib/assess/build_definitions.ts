@@ -5,9 +5,12 @@
  */
 import { neighborBuilder } from "../neighbors/build.ts";
 import { describeTopology, type NeighborSummary } from "../neighbors/describe.ts";
-import { kNearestDistances } from "../neighbors/distances.ts";
-import { type Rule, ruleText } from "../neighbors/rule.ts";
+import { boundaryLengths } from "../neighbors/boundary_lengths.ts";
+import { openSpace } from "../neighbors/open_space.ts";
+import type { PointSpace } from "../neighbors/point_space.ts";
+import { type Rule, ruleNeeds, ruleText } from "../neighbors/rule.ts";
 import type { Topology } from "../neighbors/topology.ts";
+import type { Standardize } from "../weights/standardize.ts";
 import { weigh } from "../weights/weigh.ts";
 import { parseWeightRule, type WeightRule } from "../weights/weight_rule.ts";
 import type { Weights } from "../weights/weights.ts";
@@ -22,15 +25,15 @@ export interface BuiltDefinition {
 
 /** What a {@link definitionBuilder} needs besides the ground. */
 export interface BuilderOptions {
-  readonly standardize: "row" | "none";
+  readonly standardize: Standardize;
   /** What to call used area i in messages. */
   readonly nameOf: (i: number) => string;
 }
 
 /** Builds definitions on one ground; terms that several rules share are found once. */
 export interface DefinitionBuilder {
-  /** Points of the used areas in the metric, x0, y0, …; null without one. */
-  readonly points: Float64Array | null;
+  /** Distance between the used areas; null without a metric. */
+  readonly space: PointSpace | null;
   build(rule: Rule, weights: string): BuiltDefinition;
 }
 
@@ -39,32 +42,39 @@ export function definitionBuilder(
   { ground }: LaidGround,
   { standardize, nameOf }: BuilderOptions,
 ): DefinitionBuilder {
-  const topologyOf = neighborBuilder(ground);
-  const points = ground.points && usablePoints(ground.points, ground.usable);
+  const space = spaceOf(ground);
+  const topologyOf = neighborBuilder({ ...ground, space });
   return {
-    points,
+    space,
     build: (rule, weightsText) => {
       const topology = topologyOf(rule);
       const weightRule = parseWeightRule(weightsText);
       const weights = weigh(topology, {
         weights: weightRule,
         standardize,
-        points,
-        bandwidths: points === null ? undefined : adaptiveBandwidths(points, weightRule),
+        distance: space?.distance,
+        bandwidths: space ? adaptiveBandwidths(space, weightRule) : undefined,
+        boundaryLength: weightRule.kind === "boundary"
+          ? boundaryLengths(ground, topology, ruleNeeds(rule).snap)
+          : undefined,
         idOf: nameOf,
       });
-      const summary = describeTopology(topology, { rule: ruleText(rule), points });
+      const summary = describeTopology(topology, {
+        rule: ruleText(rule),
+        distance: space?.distance,
+      });
       return { summary, topology, weights };
     },
   };
 }
 
-function usablePoints(points: Float64Array, usable: Uint8Array): Float64Array {
-  return points.filter((_, at) => usable[at >> 1] === 1);
+function spaceOf({ points, usable, ellipsoid }: LaidGround["ground"]): PointSpace | null {
+  if (points === null) return null;
+  return openSpace(points.filter((_, at) => usable[at >> 1] === 1), ellipsoid);
 }
 
 /** Distance of each area to its N-th nearest, for a `kN` bandwidth; undefined for all others. */
-function adaptiveBandwidths(points: Float64Array, rule: WeightRule): Float64Array | undefined {
+function adaptiveBandwidths(space: PointSpace, rule: WeightRule): Float64Array | undefined {
   if (!("bandwidth" in rule) || rule.bandwidth.kind !== "adaptive") return undefined;
-  return kNearestDistances(points, rule.bandwidth.nearest);
+  return space.toNearest(rule.bandwidth.nearest);
 }

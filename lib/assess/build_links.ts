@@ -4,10 +4,14 @@
  * @module
  */
 import { GEOMETRY_KINDS } from "../layer/geometry.ts";
+import type { Crs } from "../layer/layer.ts";
 import type { NeighborSummary } from "../neighbors/describe.ts";
-import { connectingDistances } from "../neighbors/distances.ts";
-import { parseRule, ruleText } from "../neighbors/rule.ts";
-import type { LinkTable } from "../write/results.ts";
+import { parseRule, ruleNeeds, ruleText } from "../neighbors/rule.ts";
+import { oneOf } from "./one_of.ts";
+import { STANDARDIZATIONS } from "../weights/standardize.ts";
+import { parseWeightRule, weightRuleText } from "../weights/weight_rule.ts";
+import type { LinkTable, MapDiagnostics } from "../write/results.ts";
+import { diagnoseGround, groundWarnings } from "./diagnose_ground.ts";
 import { definitionBuilder } from "./build_definitions.ts";
 import { areaNames, defaultRule, layGround } from "./lay_ground.ts";
 import { linkTable } from "./link_table.ts";
@@ -24,8 +28,13 @@ export interface BuiltLinks {
   readonly links: LinkTable;
   /** Names of all rows, from the id field or row numbers. */
   readonly names: readonly string[];
-  /** Smallest distance at which no area is alone, and at which the map hangs together; null without a metric. */
-  readonly connecting: { readonly noneAlone: number; readonly oneComponent: number } | null;
+  /** Whether an id field was named. */
+  readonly named: boolean;
+  readonly diagnostics: MapDiagnostics;
+  readonly warnings: readonly string[];
+  /** Representative point of every row in the layer's coordinates; NaN where it has none. */
+  readonly places: Float64Array;
+  readonly crs: Crs | null;
   /** Unit of all distances; null without a metric. */
   readonly unit: string | null;
 }
@@ -46,22 +55,30 @@ export async function buildLinks(
   const kept = Uint32Array.from({ length: layer.count }, (_, row) => row);
   const usable = layer.geometry.kinds.map((kind) => kind === none ? 0 : 1);
   const used = kept.filter((row) => usable[row] === 1);
+  const weights = weightRuleText(parseWeightRule(options.weights ?? "equal"));
+  const standardize = oneOf("--standardize", options.standardize ?? "row", STANDARDIZATIONS);
+  const { metric, points } = options;
   const laid = await layGround(layer, { kept, usable }, {
     rules: [rule],
-    metric: options.metric,
+    metric,
+    points,
+    weights,
     names,
   });
-  const builder = definitionBuilder(laid, {
-    standardize: options.standardize ?? "row",
-    nameOf: (i) => names[used[i]],
-  });
-  const built = builder.build(rule, "equal");
-  const { points } = builder;
+  const builder = definitionBuilder(laid, { standardize, nameOf: (i) => names[used[i]] });
+  const built = builder.build(rule, weights);
+  const { space } = builder;
+  const summary = { ...built.summary, rule: ruleText(rule) };
+  const diagnostics = diagnoseGround(laid, space, ruleNeeds(rule).snap);
   return {
-    summary: { ...built.summary, rule: ruleText(rule) },
-    links: linkTable(built, { used, points }),
+    summary,
+    links: linkTable(built, { used, space }),
     names,
-    connecting: points && used.length > 1 ? connectingDistances(points) : null,
+    named: options.id !== undefined,
+    diagnostics,
+    warnings: groundWarnings(diagnostics, { rule, islands: summary.islands }),
+    places: laid.places,
+    crs: layer.crs,
     unit: laid.metric?.unit ?? null,
   };
 }

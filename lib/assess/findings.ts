@@ -66,7 +66,7 @@ async function trySweep(
   const standard = plan.vary === null
     ? standardDefinitions({
       shape: layer.shape === "polygon" ? "polygon" : "point",
-      points: builder.points,
+      space: builder.space,
       count: indicator.used.length,
     })
     : { definitions: [], notes: [] };

@@ -7,12 +7,13 @@ import { extname } from "node:path";
 import { readColumn } from "../layer/column.ts";
 import { GEOMETRY_KINDS } from "../layer/geometry.ts";
 import type { Column, Layer } from "../layer/layer.ts";
-import { connectingDistances } from "../neighbors/distances.ts";
+import { diagnose, type GroundDiagnostics } from "../neighbors/diagnose.ts";
+import { openSpace } from "../neighbors/open_space.ts";
 import { type GeometryHealth, geometryHealth } from "../read/inspect_geometry.ts";
+import { isTable } from "../read/table.ts";
 import { type LayerInfo, listLayers } from "../read/vector.ts";
-import { definitionBuilder } from "./build_definitions.ts";
 import { layGround } from "./lay_ground.ts";
-import { isTable, openSource } from "./open_source.ts";
+import { openSource } from "./open_source.ts";
 import type { SourceOptions } from "./options.ts";
 
 /** A field and what its values look like. */
@@ -45,6 +46,10 @@ export interface Inspection {
     readonly oneComponent: number;
     readonly unit: string;
   } | null;
+  /** How boundaries fit together; null where there are no polygons. */
+  readonly boundaries: GroundDiagnostics["boundaries"];
+  /** Areas whose point is that of another one too; null where no distance can be measured. */
+  readonly sharingPlaces: number | null;
   /** An `assess` command to paste; null for rows without geometry, which have no neighbors. */
   readonly suggestion: string | null;
 }
@@ -70,7 +75,7 @@ export async function inspect(path: string, options: SourceOptions = {}): Promis
     crs: layer.crs && [layer.crs.name, layer.crs.code].filter(Boolean).join(" · "),
     fields,
     geometry: geometryHealth(layer),
-    distances: await distancesOf(layer),
+    ...await groundOf(layer),
     suggestion: suggestCommand(path, layer, { fields, chosen: layers.length > 1 }),
   };
 }
@@ -99,17 +104,26 @@ function summarizeField(layer: Layer, name: string): FieldSummary {
   };
 }
 
-async function distancesOf(layer: Layer): Promise<Inspection["distances"]> {
+async function groundOf(
+  layer: Layer,
+): Promise<Pick<Inspection, "distances" | "boundaries" | "sharingPlaces">> {
   const none = GEOMETRY_KINDS.indexOf("none");
   const kept = Uint32Array.from(layer.geometry.kinds.keys())
     .filter((row) => layer.geometry.kinds[row] !== none);
-  if (kept.length < 2) return null;
   const usable = new Uint8Array(kept.length).fill(1);
   const metric = layer.crs ? "auto" : "planar";
   const laid = await layGround(layer, { kept, usable }, { rules: [], metric, names: [] });
-  const { points } = definitionBuilder(laid, { standardize: "row", nameOf: String });
-  if (!points || !laid.metric) return null;
-  return { ...connectingDistances(points), unit: laid.metric.unit };
+  const { points, ellipsoid, geometry } = laid.ground;
+  const hasPolygons = geometry?.kinds.includes(GEOMETRY_KINDS.indexOf("polygon")) ?? false;
+  const { noneAlone, oneComponent, boundaries, sharingPlaces } = diagnose({
+    space: points && openSpace(points, ellipsoid),
+    contiguity: hasPolygons ? laid.contiguity : null,
+    snap: null,
+  });
+  const distances = laid.metric && noneAlone !== null && oneComponent !== null
+    ? { noneAlone, oneComponent, unit: laid.metric.unit }
+    : null;
+  return { distances, boundaries, sharingPlaces };
 }
 
 /** Names of fields that measure or number areas rather than say something about them. */

@@ -5,19 +5,26 @@
  */
 import { UnfitDataError } from "../layer/errors.ts";
 import { readColumn } from "../layer/column.ts";
-import { pickFeatures } from "../layer/geometry.ts";
+import { boundsOf, type Box, pickFeatures } from "../layer/geometry.ts";
 import type { Layer } from "../layer/layer.ts";
 import type { Ground } from "../neighbors/build.ts";
+import { type ContiguityFinder, contiguityFinder } from "../neighbors/contiguity.ts";
+import { fitsGlobe } from "../neighbors/globe.ts";
 import { parseRule, type Rule, ruleNeeds } from "../neighbors/rule.ts";
 import { chooseMetric, type Metric } from "../project/metric.ts";
 import { representativePoints } from "../project/points.ts";
+import { openProjection } from "../project/projection.ts";
 import { resolveCrs } from "../read/crs.ts";
 import { type LinkList, readLinks } from "../read/links.ts";
+import { givenPlaces, parsePointFields } from "./area_places.ts";
 import { type RecordedInput, recordInput } from "../read/record_input.ts";
+import { fallsWithDistance, parseWeightRule } from "../weights/weight_rule.ts";
 
 /** What {@link layGround} found out. */
 export interface LaidGround {
   readonly ground: Ground;
+  /** Shared boundaries of the kept areas, which the ground uses too. */
+  readonly contiguity: ContiguityFinder;
   /** How distance is measured; null where no distance can be. */
   readonly metric: Metric | null;
   /** Representative points of the kept areas in the layer's own coordinates, 2 each. */
@@ -28,12 +35,19 @@ export interface LaidGround {
   readonly inputs: readonly RecordedInput[];
 }
 
+/** Stands for the box of a layer without coordinates. */
+const NO_BOX: Box = [0, 0, 0, 0];
+
 /** What the ground is laid for. */
 export interface GroundOptions {
   /** All rules that will be asked for. */
   readonly rules: readonly Rule[];
   /** How distance is measured. @default "auto" */
   readonly metric?: string;
+  /** Two fields that hold the points, as `X,Y`. @default points inside the areas */
+  readonly points?: string;
+  /** How much each neighbor counts, as text. @default "equal" */
+  readonly weights?: string;
   /** Names of all rows, for link files. */
   readonly names: readonly string[];
 }
@@ -42,7 +56,7 @@ export interface GroundOptions {
  * Finds points and metric for the kept rows, and reads link files and block fields.
  *
  * @param areas Rows in play, ascending, and a mask over them: areas that may be linked.
- * @throws {UnfitDataError} when a rule measures distance and the layer does not allow it.
+ * @throws {UnfitDataError} when a rule or its weights measure distance and the layer does not allow it.
  */
 export async function layGround(
   layer: Layer,
@@ -52,16 +66,24 @@ export async function layGround(
   const { kept, usable } = areas;
   const needs = options.rules.map(ruleNeeds);
   const geometry = pickFeatures(layer.geometry, kept);
-  const geographic = layer.crs?.geographic ?? false;
-  const places = representativePoints(geometry, { geographic });
-  const needed = needs.some(({ points }) => points);
+  const geographic = layer.crs?.geographic === true && fitsGlobe(boundsOf(geometry) ?? NO_BOX);
+  const places = options.points === undefined
+    ? representativePoints(geometry, { geographic })
+    : givenPlaces(layer, kept, parsePointFields(options.points));
+  const needed = needs.some(({ points }) => points) ||
+    fallsWithDistance(parseWeightRule(options.weights ?? "equal"));
   const { metric, withoutMetric } = await metricOf(layer, options.metric ?? "auto", needed);
   const files = new Set(needs.flatMap(({ linkFiles }) => linkFiles));
   const links = await readLinkFiles(files, kept, options.names);
   const inputs = await Promise.all([...files].map((file) => recordInput("links", file)));
+  const metersPerUnit = geographic ? 1 : metersPerUnitOf(layer);
+  const contiguity = contiguityFinder(geometry, { geographic, metersPerUnit });
   const ground: Ground = {
     geometry,
+    contiguity,
+    metersPerUnit,
     points: metric && metric.project(places),
+    ellipsoid: metric && metric.ellipsoid,
     count: kept.length,
     usable,
     geographic,
@@ -71,7 +93,7 @@ export async function layGround(
       return Array.from(kept, (row) => textOf(values[row]));
     },
   };
-  return { ground, metric, places, withoutMetric, inputs: inputs.flat() };
+  return { ground, contiguity, metric, places, withoutMetric, inputs: inputs.flat() };
 }
 
 /** The rule when none is given: `touching` where most features are polygons, else `nearest:6`. */
@@ -88,6 +110,11 @@ export function areaNames(layer: Layer, id: string | undefined): string[] {
 
 function textOf(value: string | number | null): string | null {
   return value === null || Number.isNaN(value) ? null : String(value);
+}
+
+/** Meters in a unit of a projected layer, so that a `snap` in meters is right on maps in feet; 1 where not known. */
+function metersPerUnitOf({ crs }: Layer): number {
+  return crs === null ? 1 : openProjection(crs.wkt)?.metersPerUnit ?? 1;
 }
 
 async function metricOf(

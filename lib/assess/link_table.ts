@@ -4,13 +4,14 @@
  * @module
  */
 import { linkDistances } from "../neighbors/distances.ts";
+import type { PointSpace } from "../neighbors/point_space.ts";
 import type { LinkTable } from "../write/results.ts";
 import type { BuiltDefinition } from "./build_definitions.ts";
 
 /** One entry for each directed link that carries a weight. */
 export function linkTable(
   { weights }: BuiltDefinition,
-  { used, points }: { readonly used: Uint32Array; readonly points: Float64Array | null },
+  { used, space }: { readonly used: Uint32Array; readonly space: PointSpace | null },
 ): LinkTable {
   const { offsets, indices, values } = weights;
   const from = new Uint32Array(indices.length);
@@ -19,6 +20,6 @@ export function linkTable(
     from,
     to: indices.map((j) => used[j]),
     weight: values,
-    distance: points && linkDistances(weights, points),
+    distance: space && linkDistances(weights, space.distance),
   };
 }

@@ -3,20 +3,12 @@
  *
  * @module
  */
-import { extname } from "node:path";
 import type { Layer } from "../layer/layer.ts";
 import { resolveCrs } from "../read/crs.ts";
-import { readTable } from "../read/table.ts";
+import { isTable, readTable } from "../read/table.ts";
 import { tableLayer } from "../read/table_layer.ts";
 import { readLayer } from "../read/vector.ts";
 import type { SourceOptions } from "./options.ts";
-
-const TABLE_ENDINGS = new Set([".csv", ".tsv", ".txt", ".xlsx"]);
-
-/** Whether a path is read as a table, by its ending. */
-export function isTable(path: string): boolean {
-  return TABLE_ENDINGS.has(extname(path).toLowerCase());
-}
 
 /**
  * Reads a layer whatever it came in. Tables (CSV, TSV, XLSX) become layers through their x/y or WKT columns; all

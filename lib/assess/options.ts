@@ -4,6 +4,7 @@
  * @module
  */
 import type { Adjustment } from "../inference/adjust.ts";
+import type { Standardize } from "../weights/standardize.ts";
 import type { Transform } from "../prepare/transform.ts";
 
 /** Where a layer comes from and how to read it. */
@@ -32,10 +33,14 @@ export interface SourceOptions {
 export interface NeighborOptions {
   /** Neighbor rule. @default `touching` for polygons, `nearest:6` for points */
   readonly neighbors?: string;
-  /** `auto`, `planar`, `EPSG:N` or a proj string. @default "auto" */
+  /** `auto`, `planar`, `geodesic`, `EPSG:N` or a proj string. @default "auto" */
   readonly metric?: string;
+  /** Two fields that hold a point for each area, as `X,Y`, in the layer's own coordinates. @default points inside the areas */
+  readonly points?: string;
+  /** How much each neighbor counts. @default "equal" */
+  readonly weights?: string;
   /** How rows are scaled. @default "row" */
-  readonly standardize?: "row" | "none";
+  readonly standardize?: Standardize;
 }
 
 /** Long work reports here and can be stopped. */
@@ -53,6 +58,8 @@ export interface IndicatorOptions {
   readonly rate?: string;
   /** Rates are shown per so many of the population. @default 1000 */
   readonly per?: number;
+  /** Whether nobody counts twice in a rate: cases are part of the population, as damp homes of all homes. @default false */
+  readonly share?: boolean;
   /** Name of a rate and of its result fields. @default the cases field with `_rate` behind it */
   readonly name?: string;
   /** Transform of the values; of a rate `freeman-tukey`. @default "none", and standardized rates for a rate */
@@ -78,8 +85,6 @@ export interface AssessOptions
   readonly decimal?: "." | ",";
   /** Thousands mark of text numbers. @default detected */
   readonly thousands?: "none" | "," | "." | "'" | " ";
-  /** How much each neighbor counts. @default "equal" */
-  readonly weights?: string;
   /** Permutations of the global test. @default 999 */
   readonly permutations?: number;
   /** Conditional permutations of each area. @default 999999, and 99999 for each definition of the sweep */

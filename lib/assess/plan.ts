@@ -7,8 +7,10 @@ import { UsageError } from "../layer/errors.ts";
 import { parseMissingValues } from "../prepare/missing_values.ts";
 import { parseRule, ruleText } from "../neighbors/rule.ts";
 import { parseVary } from "../neighbors/vary.ts";
+import { STANDARDIZATIONS, type Standardize } from "../weights/standardize.ts";
 import { parseWeightRule, weightRuleText } from "../weights/weight_rule.ts";
 import { type Adjustment, ADJUSTMENTS } from "../inference/adjust.ts";
+import { parsePointFields } from "./area_places.ts";
 import { oneOf } from "./one_of.ts";
 import type { AssessOptions, SourceOptions } from "./options.ts";
 import { type IndicatorPlan, planIndicator } from "./plan_indicator.ts";
@@ -30,8 +32,10 @@ export interface AssessPlan {
   /** Canonical rule; null for the default of the layer's shape. */
   readonly neighbors: string | null;
   readonly metric: string;
+  /** Two fields that hold the points, as `X,Y`; null for points inside the areas. */
+  readonly points: string | null;
   readonly weights: string;
-  readonly standardize: "row" | "none";
+  readonly standardize: Standardize;
   readonly permutations: number;
   /** Conditional permutations for the main definition. */
   readonly localPermutations: number;
@@ -75,8 +79,9 @@ export function planAssessment(path: string, options: AssessOptions): AssessPlan
       : oneOf("--thousands", options.thousands, ["none", ",", ".", "'", " "]),
     neighbors: options.neighbors === undefined ? null : ruleText(parseRule(options.neighbors)),
     metric: options.metric ?? "auto",
+    points: options.points === undefined ? null : parsePointFields(options.points).join(","),
     weights: weightRuleText(parseWeightRule(options.weights ?? "equal")),
-    standardize: oneOf("--standardize", options.standardize ?? "row", ["row", "none"]),
+    standardize: oneOf("--standardize", options.standardize ?? "row", STANDARDIZATIONS),
     permutations: permutationCount("--permutations", options.permutations ?? 999),
     localPermutations: permutationCount("--local-permutations", local ?? 999_999),
     sweepLocalPermutations: Math.min(local ?? 99_999, 99_999),

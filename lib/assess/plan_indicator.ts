@@ -26,6 +26,8 @@ export interface RatePlan {
   readonly population: string;
   /** Rates are shown per so many of the population. */
   readonly per: number;
+  /** Whether nobody counts twice. */
+  readonly share: boolean;
   /** What is tested: standardized rates, or Freeman-Tukey values. */
   readonly transform: "standardized" | "freeman-tukey";
 }
@@ -51,8 +53,11 @@ export function planIndicator(options: IndicatorOptions): IndicatorPlan {
   );
 }
 
-function planValue(field: string, { per, name, transform }: IndicatorOptions): ValuePlan {
-  if (per !== undefined) throw new UsageError("Cannot use --per without --rate CASES/POPULATION");
+function planValue(field: string, { per, share, name, transform }: IndicatorOptions): ValuePlan {
+  if (per !== undefined || share) {
+    const option = share ? "--share" : "--per";
+    throw new UsageError(`Cannot use ${option} without --rate CASES/POPULATION`);
+  }
   if (name !== undefined) {
     throw new UsageError(
       `Cannot use --name ${name} with --value ${field}, as the result fields carry the field's name`,
@@ -71,11 +76,13 @@ function planValue(field: string, { per, name, transform }: IndicatorOptions): V
   };
 }
 
-function planRate(text: string, { per = 1000, name, transform }: IndicatorOptions): RatePlan {
+function planRate(text: string, options: IndicatorOptions): RatePlan {
+  const { per = 1000, share = false, name, transform } = options;
   const { cases, population } = parseRate(text);
   if (!(per > 0 && Number.isFinite(per))) {
     throw new UsageError(`Cannot use --per ${per}; give a number above 0, such as 1000`);
   }
+  if (name?.trim() === "") throw new UsageError("Cannot use an empty --name; give a word or two");
   if (transform !== undefined && transform !== "freeman-tukey") {
     throw new UsageError(
       `Cannot use --transform ${transform} with --rate, which tests standardized rates; leave it out or choose freeman-tukey`,
@@ -87,6 +94,7 @@ function planRate(text: string, { per = 1000, name, transform }: IndicatorOption
     cases,
     population,
     per,
+    share,
     transform: transform ?? "standardized",
   };
 }

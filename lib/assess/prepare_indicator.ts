@@ -39,8 +39,8 @@ export interface Indicator extends UsableAreas {
 /**
  * Reads the indicator of a plan and sorts the areas.
  *
- * @throws {UnfitDataError} when fewer than 3 areas have a value, all values are equal, or the numbers cannot be
- * used for what was asked.
+ * @throws {UnfitDataError} when fewer than 3 areas have a value, all values are equal, `--value-where` selects
+ * none, or the numbers cannot be used for what was asked.
  */
 export function prepareIndicator(
   layer: Layer,
@@ -57,9 +57,11 @@ export function prepareIndicator(
     valueWhere: filterOf(plan.valueWhere, layer),
   });
   const used = areas.kept.filter((_, at) => areas.usable[at] === 1);
-  checkAreas(used.length, layer, plan);
+  checkAreas(used.length, areas, { layer, plan });
   const { values, rateCounts } = testedValues(read, used, plan.indicator);
   checkValues(values, layer, plan);
+  const usedTested = areas.tested.filter((_, at) => areas.usable[at] === 1);
+  checkTested(usedTested, layer, plan);
   return {
     ...areas,
     name: plan.indicator.name,
@@ -67,7 +69,7 @@ export function prepareIndicator(
     used,
     values,
     rateCounts,
-    usedTested: areas.tested.filter((_, at) => areas.usable[at] === 1),
+    usedTested,
     missing: read.missing,
     notes: read.notes,
   };
@@ -80,13 +82,17 @@ function filterOf(text: string | null, layer: Layer): ((row: number) => boolean)
   return compileFilter(text, readColumns(layer, fields));
 }
 
-function checkAreas(usable: number, layer: Layer, plan: AssessPlan): void {
+function checkAreas(
+  usable: number,
+  { counts }: UsableAreas,
+  { layer, plan }: { readonly layer: Layer; readonly plan: AssessPlan },
+): void {
   if (usable >= FEWEST_AREAS) return;
+  const leftOut = counts.map(({ reason, count }) => `${count} ${reason}`).join(", ");
+  const why = leftOut === "" ? "" : ` (left out: ${leftOut})`;
   throw new UnfitDataError(
-    `${
-      subject(layer, plan)
-    } as ${usable} of its ${layer.count} areas can be used and at least ${FEWEST_AREAS} are needed; ` +
-      "check the filters and the missing values",
+    `${subject(layer, plan)} as ${usable} of its ${layer.count} areas can be used${why} ` +
+      `and at least ${FEWEST_AREAS} are needed; check the filters and the missing values`,
   );
 }
 
@@ -96,6 +102,14 @@ function checkValues(values: Float64Array, layer: Layer, plan: AssessPlan): void
     `${subject(layer, plan)} as all ${values.length} values are equal (${
       values[0]
     }), so that nothing can be clustered`,
+  );
+}
+
+function checkTested(tested: Uint8Array, layer: Layer, plan: AssessPlan): void {
+  if (tested.includes(1)) return;
+  throw new UnfitDataError(
+    `${subject(layer, plan)} as --value-where "${plan.valueWhere}" selects none of the ` +
+      `${tested.length} areas that can be used; choose a wider filter`,
   );
 }
 

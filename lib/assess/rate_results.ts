@@ -6,7 +6,7 @@
 import { FUNNEL_WORDS, type FunnelWord } from "../prepare/funnel.ts";
 import type { AreaRates, RateResults } from "../write/rate_results.ts";
 import type { RateFindings } from "./rate_findings.ts";
-import { figure, spread, spreadNumbers } from "./spread.ts";
+import { figure, type Places, spread, spreadNumbers } from "./spread.ts";
 
 /** Numbers of the whole map; undefined ones are null. */
 export function rateResults(found: RateFindings): RateResults {
@@ -16,6 +16,7 @@ export function rateResults(found: RateFindings): RateResults {
     cases: plan.cases,
     population: plan.population,
     per: plan.per,
+    share: plan.share,
     totalCases: found.totalCases,
     totalPopulation: found.totalPopulation,
     overall: plan.per * moments.rate,
@@ -36,13 +37,13 @@ export function rateResults(found: RateFindings): RateResults {
 }
 
 /** Rates of the used areas spread over all rows of the layer. */
-export function areaRates(found: RateFindings, used: Uint32Array, count: number): AreaRates {
+export function areaRates(found: RateFindings, places: Places): AreaRates {
   const shown = (rates: Float64Array) =>
-    spreadNumbers(rates.map((rate) => found.plan.per * rate), used, count);
+    spreadNumbers(rates.map((rate) => found.plan.per * rate), places);
   return {
     rate: shown(found.raw),
     shrunk: shown(found.shrunk),
     shrunkLocal: shown(found.shrunkLocal),
-    funnel: spread<FunnelWord | null>(found.funnel, { used, count, fill: null }),
+    funnel: spread<FunnelWord | null>(found.funnel, { ...places, fill: null }),
   };
 }

@@ -58,11 +58,11 @@ export function readIndicator(
   return { shown: values, rateCounts: null, ...rest };
 }
 
-function readRate({ cases, population, per }: RatePlan, read: FieldReader): ReadIndicator {
+function readRate({ cases, population, per, share }: RatePlan, read: FieldReader): ReadIndicator {
   const above = { name: cases, numbers: read(cases) };
   const below = { name: population, numbers: read(population) };
-  const { reasons, notes } = checkCounts(above, below);
-  const counts = { cases: above.numbers.values, population: below.numbers.values };
+  const { reasons, notes } = checkCounts(above, below, { share });
+  const counts = { cases: above.numbers.values, population: below.numbers.values, share };
   const fields = [above, below];
   return {
     shown: rawRates(counts).map((rate, row) => reasons[row] === null ? per * rate : NaN),

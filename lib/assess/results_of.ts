@@ -89,7 +89,8 @@ function joinOf(join: JoinReport): NonNullable<Results["join"]> {
   };
 }
 
-function runOf({ plan, indicator, main, rule }: Study, found: Findings, areas: AreaResults): Run {
+function runOf(study: Study, found: Findings, areas: AreaResults): Run {
+  const { plan, indicator, main, rule, diagnostics } = study;
   const { values } = indicator;
   const mean = values.reduce((sum, value) => sum + value, 0) / values.length;
   const square = values.reduce((sum, value) => sum + (value - mean) ** 2, 0) / values.length;
@@ -100,6 +101,7 @@ function runOf({ plan, indicator, main, rule }: Study, found: Findings, areas: A
       rule: ruleText(rule),
       neighborCounts: [...main.summary.neighborCounts],
     },
+    diagnostics,
     weights: plan.weights,
     standardize: plan.standardize,
     values: {

@@ -4,12 +4,16 @@
  * @module
  */
 
+/** Where the used areas stand. */
+export interface Places {
+  /** Rows of the used areas, ascending. */
+  readonly used: Uint32Array;
+  /** Rows of the layer. */
+  readonly count: number;
+}
+
 /** Numbers of the used rows at their rows, NaN elsewhere. */
-export function spreadNumbers(
-  values: Float64Array,
-  used: Uint32Array,
-  count: number,
-): Float64Array {
+export function spreadNumbers(values: Float64Array, { used, count }: Places): Float64Array {
   const all = new Float64Array(count).fill(NaN);
   used.forEach((row, at) => all[row] = values[at]);
   return all;
@@ -18,7 +22,7 @@ export function spreadNumbers(
 /** What the used rows hold at their rows, `fill` elsewhere. */
 export function spread<T>(
   values: ArrayLike<T>,
-  { used, count, fill }: { readonly used: Uint32Array; readonly count: number; readonly fill: T },
+  { used, count, fill }: Places & { readonly fill: T },
 ): T[] {
   const all = new Array<T>(count).fill(fill);
   used.forEach((row, at) => all[row] = values[at]);

@@ -5,14 +5,16 @@
  */
 import { UnfitDataError } from "../layer/errors.ts";
 import type { Layer } from "../layer/layer.ts";
-import { parseRule, type Rule, ruleText } from "../neighbors/rule.ts";
+import { parseRule, type Rule, ruleNeeds, ruleText } from "../neighbors/rule.ts";
 import {
   type BuiltDefinition,
   type DefinitionBuilder,
   definitionBuilder,
 } from "./build_definitions.ts";
+import { diagnoseGround } from "./diagnose_ground.ts";
 import { defaultRule, type LaidGround, layGround } from "./lay_ground.ts";
 import type { AssessPlan } from "./plan.ts";
+import type { MapDiagnostics } from "../write/results.ts";
 import type { Indicator } from "./prepare_indicator.ts";
 
 /** One indicator on its ground, with the main definition built. */
@@ -25,6 +27,7 @@ export interface Study {
   readonly builder: DefinitionBuilder;
   readonly rule: Rule;
   readonly main: BuiltDefinition;
+  readonly diagnostics: MapDiagnostics;
 }
 
 /**
@@ -40,6 +43,8 @@ export async function layStudy(
   const laid = await layGround(layer, indicator, {
     rules: [rule, ...(plan.vary ?? []).map(parseRule)],
     metric: plan.metric,
+    points: plan.points ?? undefined,
+    weights: plan.weights,
     names,
   });
   const builder = definitionBuilder(laid, {
@@ -54,5 +59,6 @@ export async function layStudy(
       }; choose a wider rule with --neighbors`,
     );
   }
-  return { plan, layer, names, indicator, laid, builder, rule, main };
+  const diagnostics = diagnoseGround(laid, builder.space, ruleNeeds(rule).snap);
+  return { plan, layer, names, indicator, laid, builder, rule, main, diagnostics };
 }

@@ -32,10 +32,13 @@ export function testedValues(
   const pick = (all: Float64Array) => Float64Array.from(used, (row) => all[row]);
   if (plan.kind === "value") {
     const nameOf = (at: number) => `row ${used[at] + 1} (_row ${used[at]}) of field ${plan.field}`;
-    return { values: transformValues(pick(read.shown), plan.transform, nameOf), rateCounts: null };
+    return {
+      values: transformValues(pick(read.shown), plan.transform, { nameOf }),
+      rateCounts: null,
+    };
   }
-  const { cases, population } = read.rateCounts!;
-  const counts = { cases: pick(cases), population: pick(population) };
+  const { cases, population, share } = read.rateCounts!;
+  const counts = { cases: pick(cases), population: pick(population), share };
   if (counts.cases.every((count) => count === 0)) {
     throw new UnfitDataError(
       `Cannot test the rate ${plan.cases}/${plan.population} as none of its ${used.length} areas has any cases`,

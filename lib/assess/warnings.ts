@@ -7,7 +7,11 @@ import type { Topology } from "../neighbors/topology.ts";
 import type { Metric } from "../project/metric.ts";
 import type { JoinReport } from "../read/join.ts";
 import type { NeighborSummary } from "../neighbors/describe.ts";
+import type { Rule } from "../neighbors/rule.ts";
+import type { MapDiagnostics } from "../write/results.ts";
 import type { LocalTest } from "../inference/test_local.ts";
+
+import { groundWarnings } from "./diagnose_ground.ts";
 
 /** Distances wrong by more than this share of themselves are pointed out. */
 const NOTABLE_DISTORTION = 0.01;
@@ -19,7 +23,9 @@ export interface WarningInput {
   readonly notes: readonly string[];
   readonly join: JoinReport | null;
   readonly used: number;
+  readonly rule: Rule;
   readonly summary: NeighborSummary;
+  readonly diagnostics: MapDiagnostics;
   readonly metric: Metric | null;
   readonly withoutMetric: string | null;
   readonly sweep: boolean;
@@ -36,6 +42,7 @@ export function warningsOf(input: WarningInput): string[] {
     ...input.notes,
     ...joinWarnings(input.join),
     ...neighborWarnings(input),
+    ...groundWarnings(input.diagnostics, { rule: input.rule, islands: input.summary.islands }),
     ...metricWarnings(input),
     ...testWarnings(input),
   ];

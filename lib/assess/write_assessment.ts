@@ -112,12 +112,15 @@ function linksLayer({ layer, links, places, names, plan }: Assessment): Uint8Arr
   });
 }
 
-function reportInput({ results, areas, layer, links, names, plan }: Assessment): ReportInput {
+function reportInput(
+  { results, areas, layer, links, places, names, plan }: Assessment,
+): ReportInput {
   return {
     results,
     areas,
     geometry: layer.geometry,
     crs: layer.crs,
+    links: { from: links.from, to: links.to, places },
     s0: links.weight.reduce((sum, weight) => sum + weight, 0),
     labels: plan.source.id === undefined ? null : names,
     cautions: CAUTIONS,

@@ -13,14 +13,14 @@ export function arrangementsOf(n: number, k: number): number {
 }
 
 /**
- * Ordered ways to give the other areas' scores to the weights of `area`'s row whose weighted sum is at least
+ * Ordered ways to give the other areas' terms to the weights of `area`'s row whose weighted sum is at least
  * and at most `observed`, ties in both. Cost: all arrangements, one by one.
  */
 export function countArrangements(
-  z: Float64Array,
+  terms: Float64Array,
   { area, weights, observed }: { area: number; weights: Float64Array; observed: number },
 ): { atLeast: number; atMost: number } {
-  const taken = new Uint8Array(z.length);
+  const taken = new Uint8Array(terms.length);
   taken[area] = 1;
   let atLeast = 0, atMost = 0;
   const place = (m: number, sum: number): void => {
@@ -29,10 +29,10 @@ export function countArrangements(
       if (sum <= observed + TIE) atMost++;
       return;
     }
-    for (let other = 0; other < z.length; other++) {
+    for (let other = 0; other < terms.length; other++) {
       if (taken[other]) continue;
       taken[other] = 1;
-      place(m + 1, sum + weights[m] * z[other]);
+      place(m + 1, sum + weights[m] * terms[other]);
       taken[other] = 0;
     }
   };

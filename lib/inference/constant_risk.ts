@@ -10,15 +10,10 @@ import { TIE } from "../statistics/standardize.ts";
 import { weightSums } from "../weights/sums.ts";
 import type { Weights } from "../weights/weights.ts";
 import { constantRiskMaps } from "./constant_risk_maps.ts";
-import { checkPermutations, type PermuteOptions } from "./options.ts";
+import { type NullModel, visitNullMaps } from "./null_maps.ts";
+import type { PermuteOptions } from "./options.ts";
 import { permutationP, type TailCounts, twoSidedP } from "./p_value.ts";
-import { createPace } from "./pace.ts";
 import { type PairLinks, pairLinks, quadraticForm } from "./pair_links.ts";
-import { seedFromText } from "./seed.ts";
-import { openStream } from "./stream.ts";
-
-/** Maps drawn at once; their counts are held together. */
-const MAPS_PER_BLOCK = 64;
 
 /** Options of {@link checkConstantRisk}; `permutations` is the number of maps, 999 by default. */
 export interface ConstantRiskOptions
@@ -52,7 +47,7 @@ export interface ConstantRisk {
 }
 
 /**
- * Compares a map with maps on which the same number of cases fell on the populations at one risk for all
+ * Compares a map with maps on which as many cases fell on the populations at one risk for all
  * (Waller & Gotway 2004, section 7.4). On each map the values are made anew, and with them mean and variance. A map
  * whose values are all equal counts in both tails. p = (r + 1) / (m + 1), two-sided for I and for more
  * variation only for the index.
@@ -65,22 +60,15 @@ export async function checkConstantRisk(
   weights: Weights,
   options: ConstantRiskOptions,
 ): Promise<ConstantRisk> {
-  const maps = checkPermutations(options.permutations ?? 999);
-  const seed = seedFromText(options.seed ?? "nearkin");
-  const pace = createPace(options);
   const pairs = pairLinks(weights), { s0 } = weightSums(weights);
   const moranOf = (map: RateCounts) => plainMoran(options.valuesOf(map), pairs, s0);
   const moran = tally(moranOf(counts)), index = tally(overdispersion(counts));
-  for (let start = 0; start < maps; start += MAPS_PER_BLOCK) {
-    const numbers = Array.from({ length: Math.min(MAPS_PER_BLOCK, maps - start) }, (_, m) => m);
-    const streams = numbers.map((m) => openStream(seed, "simulatedMap", start + m));
-    for (const [m, cases] of constantRiskMaps(counts, streams).entries()) {
-      const map = { cases, population: counts.population };
-      moran.add(moranOf(map));
-      index.add(overdispersion(map));
-      await pace((start + m) / maps);
-    }
-  }
+  const constantRisk: NullModel<RateCounts> = (streams) =>
+    constantRiskMaps(counts, streams).map((cases) => ({ ...counts, cases }));
+  const maps = await visitNullMaps(constantRisk, (map) => {
+    moran.add(moranOf(map));
+    index.add(overdispersion(map));
+  }, options);
   return resultOf(maps, moran.seen(), index.seen());
 }
 

@@ -3,7 +3,7 @@
  *
  * @module
  */
-import { poissonTable } from "../prepare/poisson_quantiles.ts";
+import { countTable } from "../prepare/count_table.ts";
 import type { RateCounts } from "../prepare/rate_moments.ts";
 import { drawBelow, drawUniform, type Stream } from "./stream.ts";
 
@@ -12,46 +12,56 @@ const SHORT = 2;
 
 /**
  * Draws maps from the multinomial distribution of the observed number of cases over the populations, one
- * stream a map.
+ * stream a map. For a share, nobody counts twice: the distribution is multivariate hypergeometric.
  *
- * The counts are first drawn as independent Poisson counts whose total is a little short of the number of cases, and then
- * single cases are added (or, now and then, taken away) at random until the total is right. Given their total, Poisson
- * counts are multinomial, and adding or removing cases at random keeps them so: the draw is exact. It uses only
- * arithmetic that rounds alike in every engine. Cost: a draw for each area and map, and some
- * 2 sqrt(cases) single ones for each map.
+ * The counts are first drawn as independent Poisson (for a share binomial) counts whose total is a little short
+ * of the number of cases, and then single cases are added (or, now and then, taken away) at random until the
+ * total is right. Given their total, such counts have the distribution wanted, and adding or removing cases at
+ * random keeps them so: the draw is exact. It uses only arithmetic that rounds alike in every engine. Cost: a draw for
+ * each area and map, and some 2 sqrt(cases) single ones for each map.
  *
  * @returns Counts of each map, parallel to `streams`.
  */
 export function constantRiskMaps(
-  { cases, population }: RateCounts,
+  counts: RateCounts,
   streams: readonly Stream[],
 ): Float64Array[] {
+  const { cases, population } = counts;
   const cumulated = runningSums(population);
   const all = cumulated[cumulated.length - 1];
   const total = cases.reduce((sum, count) => sum + count, 0);
   const rate = Math.max(0, total - SHORT * Math.sqrt(total)) / all;
   const maps = streams.map(() => new Float64Array(cases.length));
   for (let i = 0; i < cases.length; i++) {
-    const { first, terms, total: whole } = poissonTable(rate * population[i]);
+    const { first, terms, total: whole } = countTable(counts, i, rate);
     const sums = runningSums(terms);
     maps.forEach((map, m) => map[i] = first + above(sums, drawUniform(streams[m]) * whole));
   }
-  maps.forEach((map, m) => settleTotal(map, total, { cumulated, stream: streams[m] }));
+  maps.forEach((map, m) => {
+    const found = map.reduce((sum, count) => sum + count, 0);
+    if (found > total) takeAway(map, differentNumbers(found - total, found, streams[m]));
+    else addCases(map, total - found, { counts, cumulated, stream: streams[m] });
+  });
   return maps;
 }
 
-/** Adds or takes away single cases at random until a map has `total` of them; writes into the map. */
-function settleTotal(
+/** Gives each of so many new cases to a person at random, of a share to one who is no case yet; writes into the map. */
+function addCases(
   map: Float64Array,
-  total: number,
-  { cumulated, stream }: { readonly cumulated: Float64Array; readonly stream: Stream },
+  missing: number,
+  { counts: { population, share }, cumulated, stream }: {
+    readonly counts: RateCounts;
+    readonly cumulated: Float64Array;
+    readonly stream: Stream;
+  },
 ): void {
   const all = cumulated[cumulated.length - 1];
-  const found = map.reduce((sum, count) => sum + count, 0);
-  for (let missing = total - found; missing > 0; missing--) {
-    map[above(cumulated, drawUniform(stream) * all)]++;
+  for (let left = missing; left > 0;) {
+    const area = above(cumulated, drawUniform(stream) * all);
+    if (share && drawUniform(stream) * population[area] < map[area]) continue;
+    map[area]++;
+    left--;
   }
-  if (found > total) takeAway(map, differentNumbers(found - total, found, stream));
 }
 
 /** `size` different whole numbers below `bound`, ascending, all sets equally likely. */

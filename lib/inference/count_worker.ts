@@ -6,7 +6,6 @@
 import { openCounter, type PartOf } from "./counters.ts";
 import type { Job } from "./counters.ts";
 import type { Counter } from "./job.ts";
-import { compileKernel } from "./load_kernel.ts";
 import type { Answer, Order } from "./run_on_workers.ts";
 
 /** The side of a worker that its own code sees. */
@@ -20,7 +19,7 @@ function serveOrders(scope: WorkerScope): void {
   let counter: Counter<PartOf<Job>> | null = null;
   scope.onmessage = ({ data }) => {
     try {
-      if ("job" in data) counter = openCounter(data.job, compileKernel());
+      if ("job" in data) counter = openCounter(data.job, data.kernel);
       else if (counter === null) throw new Error("A unit came before its job");
       else if ("finish" in data) scope.postMessage({ part: counter.finish() });
       else {

@@ -29,6 +29,7 @@ export interface Kernel {
     target: number,
   ): void;
   interleave(columns: number, n: number, lanes: number): void;
+  putInPlace(lanes: number, n: number, places: number, target: number): void;
   sumPairs(
     offsets: number,
     indices: number,

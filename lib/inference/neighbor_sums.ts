@@ -5,16 +5,17 @@
  * @module
  */
 import type { Weights } from "../weights/weights.ts";
-import { arrangementsOf, countArrangements } from "./arrangement_counts.ts";
 import { BLOCK } from "./dealer.ts";
+import { type CountingTask, enumerateArrangements, enumerateSubsets } from "./enumerate_local.ts";
 import { gather } from "./gather.ts";
-import { type LocalRows, scaleRows, sortRows } from "./local_rows.ts";
+import { checkRows, scaleRows, sortRows } from "./local_rows.ts";
 import type { PermuteOptions } from "./options.ts";
 import { orderAreas } from "./order_areas.ts";
+import { stageOf } from "./pace.ts";
+import type { PairTerm } from "./pair_term.ts";
 import type { RankedJob } from "./ranked_job.ts";
 import { runJob } from "./run_job.ts";
-import { type Seed, seedFromText } from "./seed.ts";
-import { createSubsetCounter, smallerSide, subsetsOf } from "./subset_counts.ts";
+import { seedFromText } from "./seed.ts";
 import { type Ledger, openLedger, type SumCounts } from "./sum_counts.ts";
 import { AREAS_PER_UNIT, TAIL_HITS, type WeighedJob } from "./weighed_job.ts";
 
@@ -23,80 +24,58 @@ export interface SumOptions extends PermuteOptions {
   readonly permutations: number;
   /** Areas to test, ascending; all by default. */
   readonly areas?: Uint32Array;
+  /**
+   * What a neighbor adds to the sum.
+   * @default "score"
+   */
+  readonly term?: PairTerm;
 }
 
 /** Draws that every area of unequal weights gets before the stopping rule is asked. */
 const FIRST_DRAWS = 10 * BLOCK;
 
 /**
- * Counts, for each area, how often the weighted sum of its neighbors' scores would be as large or as small
+ * Counts, for each area, how often the weighted sum of its neighbors' terms would be as large or as small
  * if the other n - 1 scores were permuted. `z` are standard scores, already checked; each row is scaled to a
- * largest weight of 1, and sums within 1e-10 count as equal.
+ * largest weight of 1, and sums within 1e-10 count as equal. An area without a weight other than 0 is alone.
  *
- * Rows of equal weights are ranked among shared draws; rows of unequal weights are weighed, and go on
- * beyond 10,240 draws only where a tail is still rare. Where fewer cases exist than permutations are asked
+ * Scores under equal weights are ranked among shared draws; all else is weighed, and goes on beyond 10,240
+ * draws only where a tail is still rare. Where fewer cases exist than permutations are asked
  * for, they are enumerated. Cost: see `ranked_job.ts` and `weighed_job.ts`.
+ *
+ * @throws RangeError for weights that are not finite and for areas with more neighbors than there are other areas.
  */
 export async function permuteNeighborSums(
   z: Float64Array,
   weights: Weights,
   options: SumOptions,
 ): Promise<SumCounts> {
+  checkRows(weights);
   const ledger = openLedger(z.length);
   const seed = seedFromText(options.seed ?? "nearkin");
-  const rows = sortRows(weights, options);
-  enumerateSubsets(ledger, { z, weights, areas: rows.subsets });
-  enumerateArrangements(ledger, { z, weights, areas: rows.arrangements });
-  await sampleRanked(ledger, { z, weights, seed, rows, options });
-  await sampleWeighed(ledger, { z, weights, seed, rows, options });
+  const { term = "score" } = options;
+  const { subsets, arrangements, ranked, weighed } = sortRows(weights, options);
+  const steps = [
+    { areas: subsets, count: enumerateSubsets },
+    { areas: arrangements, count: enumerateArrangements },
+    { areas: ranked, count: sampleRanked },
+    { areas: weighed, count: sampleWeighed },
+  ].filter(({ areas }) => areas.length > 0);
+  for (const [step, { areas, count }] of steps.entries()) {
+    const part = stageOf(options, step / steps.length, (step + 1) / steps.length);
+    await count(ledger, { z, weights, term, seed, areas, options: part });
+  }
   return ledger.counts;
 }
 
-interface Task {
-  readonly z: Float64Array;
-  readonly weights: Weights;
-}
-
-function enumerateSubsets(ledger: Ledger, task: Task & { areas: Uint32Array }): void {
-  const { z, weights, areas } = task;
-  if (areas.length === 0) return;
-  const { offsets, observed } = scaleRows(weights, areas, z);
-  const neighbors = areas.map((_, a) => offsets[a + 1] - offsets[a]);
-  const largest = neighbors.reduce((max, k) => Math.max(max, smallerSide(z.length, k)), 0);
-  const counter = createSubsetCounter(z, largest);
-  areas.forEach((area, a) =>
-    ledger.enter(area, {
-      ...counter.count(area, neighbors[a], observed[a]),
-      permutations: subsetsOf(z.length - 1, neighbors[a]),
-      enumerated: true,
-    })
-  );
-}
-
-function enumerateArrangements(ledger: Ledger, task: Task & { areas: Uint32Array }): void {
-  const { z, weights, areas } = task;
-  const rows = scaleRows(weights, areas, z);
-  areas.forEach((area, a) => {
-    const row = rows.weights.subarray(rows.offsets[a], rows.offsets[a + 1]);
-    ledger.enter(area, {
-      ...countArrangements(z, { area, weights: row, observed: rows.observed[a] }),
-      permutations: arrangementsOf(z.length - 1, row.length),
-      enumerated: true,
-    });
-  });
-}
-
-type Sampling = Task & { seed: Seed; rows: LocalRows; options: SumOptions };
-
-async function sampleRanked(ledger: Ledger, sampling: Sampling): Promise<void> {
-  const { z, weights, seed, rows, options } = sampling;
-  if (rows.ranked.length === 0) return;
-  const { offsets, observed } = scaleRows(weights, rows.ranked, z);
+async function sampleRanked(ledger: Ledger, sampling: CountingTask): Promise<void> {
+  const { z, weights, seed, areas, options } = sampling;
+  const { offsets, observed } = scaleRows(weights, areas, sampling);
   const { places, degrees, starts } = orderAreas(
-    rows.ranked.map((_, a) => offsets[a + 1] - offsets[a]),
+    areas.map((_, a) => offsets[a + 1] - offsets[a]),
     observed,
   );
-  const order = gather(rows.ranked, places);
+  const order = gather(areas, places);
   const job: RankedJob = {
     kind: "ranked",
     seed,
@@ -137,27 +116,31 @@ function testedFirst(z: Float64Array, order: Uint32Array): Float64Array {
 }
 
 /** First a fixed number of draws for all, then more for those that are still rare in a tail. */
-async function sampleWeighed(ledger: Ledger, sampling: Sampling): Promise<void> {
-  const { rows, options } = sampling;
+async function sampleWeighed(ledger: Ledger, sampling: CountingTask): Promise<void> {
+  const { areas, options } = sampling;
   const first = Math.min(options.permutations, FIRST_DRAWS);
-  await weigh(ledger, { ...sampling, areas: rows.weighed, from: 0, to: first, stopping: false });
-  if (first === options.permutations) return;
-  const rare = rows.weighed.filter((a) =>
+  if (first === options.permutations) {
+    return await weigh(ledger, { ...sampling, from: 0, to: first, stopping: false });
+  }
+  const [part, rest] = [stageOf(options, 0, 0.5), stageOf(options, 0.5, 1)];
+  await weigh(ledger, { ...sampling, options: part, from: 0, to: first, stopping: false });
+  const rare = areas.filter((a) =>
     Math.min(ledger.counts.atLeast[a], ledger.counts.atMost[a]) < TAIL_HITS
   );
   await weigh(ledger, {
     ...sampling,
     areas: rare,
+    options: rest,
     from: first,
     to: options.permutations,
     stopping: true,
   });
 }
 
-type Weighing = Sampling & { areas: Uint32Array; from: number; to: number; stopping: boolean };
+type Weighing = CountingTask & { from: number; to: number; stopping: boolean };
 
 async function weigh(ledger: Ledger, weighing: Weighing): Promise<void> {
-  const { z, weights, seed, areas, from, to, stopping, options } = weighing;
+  const { z, weights, term, seed, areas, from, to, stopping, options } = weighing;
   if (areas.length === 0) return;
   const job: WeighedJob = {
     kind: "weighed",
@@ -166,8 +149,9 @@ async function weigh(ledger: Ledger, weighing: Weighing): Promise<void> {
     to,
     stopping,
     z,
+    term,
     areas,
-    ...scaleRows(weights, areas, z),
+    ...scaleRows(weights, areas, weighing),
     atLeast: gather(ledger.counts.atLeast, areas),
     atMost: gather(ledger.counts.atMost, areas),
   };

@@ -21,7 +21,7 @@ export interface PermuteOptions {
   readonly workers?: number;
   /** Cancels the run: it rejects with the signal's reason within about 100 ms. */
   readonly signal?: AbortSignal;
-  /** Told the share of the work done, 0 to 1, about every 100 ms. */
+  /** Told the share of the work done, 0 to 1, at least about every 100 ms; it never falls. */
   readonly onProgress?: (share: number) => void;
   /**
    * Starts a worker that runs `lib/inference/count_worker.ts`.

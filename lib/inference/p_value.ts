@@ -104,12 +104,26 @@ export function clopperPearson(hits: number, draws: number, confidence = 0.99): 
 }
 
 /**
- * 99 % interval of the two-sided p: twice the Clopper-Pearson interval of the smaller tail, at most 1.
- * Null where p is exact (enumerated), stopped early or undefined.
+ * 99 % interval of the two-sided p: twice that of the smaller tail, at most 1. Null where p is exact (enumerated) or
+ * undefined.
+ *
+ * After a fixed number of draws it is the interval of Clopper & Pearson; where drawing stopped at a hit of the rarer tail,
+ * that of the draws it takes to get so many hits (negative binomial), exact in the same sense.
  */
 export function intervalOfP(counts: TailCounts): [number, number] | null {
-  if (counts.enumerated || counts.stopped || counts.permutations === 0) return null;
+  if (counts.enumerated || counts.permutations === 0) return null;
   const tail = Math.min(counts.atLeast, counts.atMost);
-  const [low, high] = clopperPearson(tail, counts.permutations);
+  const [low, high] = counts.stopped
+    ? intervalAtHit(tail, counts.permutations)
+    : clopperPearson(tail, counts.permutations);
   return [Math.min(1, 2 * low), Math.min(1, 2 * high)];
+}
+
+/** 99 % interval of a probability whose last of `hits` came at draw number `draws`. */
+function intervalAtHit(hits: number, draws: number): [number, number] {
+  if (hits === draws) return [inverseIncompleteBeta(0.005, hits, 1), 1];
+  return [
+    inverseIncompleteBeta(0.005, hits, draws - hits + 1),
+    inverseIncompleteBeta(0.995, hits, draws - hits),
+  ];
 }

@@ -12,6 +12,16 @@ export type Pace = (share: number) => Promise<void> | void;
 const STRETCH = 40;
 
 /**
+ * Options for one of several pieces of work in turn: its progress from 0 to 1 is told as a share between `from` and
+ * `to` of the whole, so that what the caller is told never falls.
+ */
+export function stageOf<O extends PermuteOptions>(options: O, from: number, to: number): O {
+  const { onProgress } = options;
+  if (onProgress === undefined) return options;
+  return { ...options, onProgress: (share) => onProgress(from + share * (to - from)) };
+}
+
+/**
  * A pace that, whenever {@link STRETCH} has passed, reports progress and lets the event loop turn, so that
  * timers run and an abort can arrive.
  *

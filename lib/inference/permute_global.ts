@@ -11,6 +11,7 @@ import type { Weights } from "../weights/weights.ts";
 import { visitOrders } from "./all_orders.ts";
 import { checkPermutations, checkWorkers, type PermuteOptions } from "./options.ts";
 import type { TailCounts } from "./p_value.ts";
+import { nearPlaces } from "./near_places.ts";
 import { type PairLinks, pairLinks, quadraticForm } from "./pair_links.ts";
 import { runJob } from "./run_job.ts";
 import { seedFromText } from "./seed.ts";
@@ -40,7 +41,7 @@ export const MOST_AREAS_ENUMERATED = 8;
  * @throws UnfitDataError for fewer than 3 areas, values all equal or not finite, and weights whose sum is not
  * above 0.
  * @throws UsageError for a number of permutations that is not whole, below 99 or above 9,999,999.
- * @throws RangeError when lengths differ. Rejects with the signal's reason when aborted.
+ * @throws RangeError when lengths differ or a weight is not finite. Rejects with the signal's reason when aborted.
  * @example
  * ```ts
  * import assert from "node:assert/strict";
@@ -63,13 +64,8 @@ export async function permuteMoran(
   const permutations = checkPermutations(options.permutations ?? 999);
   if (options.workers !== undefined) checkWorkers(options.workers);
   const { z } = standardize(values);
-  const s0 = definitions.map((weights) => {
-    checkLengths(values, weights);
-    const sum = weightSums(weights).s0;
-    checkWeightSum(sum);
-    return sum;
-  });
-  const pairs = definitions.map(pairLinks);
+  const s0 = definitions.map((weights) => totalWeight(values, weights));
+  const pairs = definitions.map((weights) => pairLinks(weights, nearPlaces(weights)));
   if (z.length <= MOST_AREAS_ENUMERATED) {
     return pairs.map((each, d) => enumerateOrders(z, each, s0[d]));
   }
@@ -83,6 +79,22 @@ export async function permuteMoran(
     );
   }
   return drawn.map((each, d) => compareWithDrawn(job.observed[d] / s0[d], each, false));
+}
+
+/**
+ * Sum of the weights, checked to go with the values.
+ *
+ * @throws UnfitDataError for a sum that is not above 0.
+ * @throws RangeError when lengths differ or a weight is not finite.
+ */
+export function totalWeight(values: Float64Array, weights: Weights): number {
+  checkLengths(values, weights);
+  const { s0 } = weightSums(weights);
+  if (!Number.isFinite(s0)) {
+    throw new RangeError(`Cannot use weights that sum to ${s0}; each weight is a finite number`);
+  }
+  checkWeightSum(s0);
+  return s0;
 }
 
 function enumerateOrders(z: Float64Array, pairs: PairLinks, s0: number): GlobalReference {

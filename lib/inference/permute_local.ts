@@ -6,7 +6,7 @@
 import { checkLengths } from "../statistics/check_lengths.ts";
 import { standardize, TIE } from "../statistics/standardize.ts";
 import type { Weights } from "../weights/weights.ts";
-import { permuteNeighborSums } from "./neighbor_sums.ts";
+import { permuteNeighborSums, type SumOptions } from "./neighbor_sums.ts";
 import { checkPermutations, checkWorkers, type PermuteOptions } from "./options.ts";
 import type { SumCounts } from "./sum_counts.ts";
 
@@ -45,7 +45,8 @@ export const DEFAULT_LOCAL_PERMUTATIONS = 999_999;
  *
  * @throws UnfitDataError for fewer than 3 areas and for values all equal or not finite.
  * @throws UsageError for a number of permutations that is not whole, below 99 or above 9,999,999.
- * @throws RangeError when lengths differ. Rejects with the signal's reason when aborted.
+ * @throws RangeError when lengths differ, a weight is not finite, or an area has more neighbors than there are other
+ * areas. Rejects with the signal's reason when aborted.
  * @example
  * ```ts
  * import assert from "node:assert/strict";
@@ -65,15 +66,31 @@ export async function permuteLocalMoran(
   weights: Weights,
   options: PermuteLocalOptions = {},
 ): Promise<LocalReference> {
+  const { z, settled } = settleLocal(values, weights, options);
+  return turnBySign(await permuteNeighborSums(z, weights, settled), z);
+}
+
+/**
+ * The door of every local permutation test: checks what was given, and gives standard scores and settled options.
+ *
+ * @throws as {@link permuteLocalMoran} does.
+ */
+export function settleLocal(
+  values: Float64Array,
+  weights: Weights,
+  options: PermuteLocalOptions,
+): { z: Float64Array; settled: SumOptions } {
   checkLengths(values, weights);
   const permutations = checkPermutations(options.permutations ?? DEFAULT_LOCAL_PERMUTATIONS);
   if (options.workers !== undefined) checkWorkers(options.workers);
-  const { z } = standardize(values);
-  return turnBySign(await permuteNeighborSums(z, weights, { ...options, permutations }), z);
+  return { z: standardize(values).z, settled: { ...options, permutations } };
 }
 
-/** I is z times the lag: below the mean the tails change places, at the mean every permutation ties. */
-function turnBySign(sums: SumCounts, z: Float64Array): LocalReference {
+/**
+ * From counts of the neighbors' sums to counts of that sum times the own score `z`: below the mean the tails
+ * change places, at the mean every permutation ties.
+ */
+export function turnBySign(sums: SumCounts, z: Float64Array): LocalReference {
   const pick = (above: Uint32Array, below: Uint32Array) =>
     above.map((count, i) =>
       Math.abs(z[i]) <= TIE ? sums.permutations[i] : z[i] > 0 ? count : below[i]

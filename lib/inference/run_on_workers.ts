@@ -4,11 +4,12 @@
  * @module
  */
 import { type Job, type PartOf, workloadOf } from "./counters.ts";
+import { compileKernel } from "./load_kernel.ts";
 import type { PermuteOptions } from "./options.ts";
 
 /** What a worker is told: first a job, then units of it one by one, at last to hand back its part. */
 export type Order =
-  | { readonly job: Job }
+  | { readonly job: Job; readonly kernel: WebAssembly.Module | null }
   | { readonly unit: number }
   | { readonly finish: true };
 
@@ -20,8 +21,8 @@ export type Answer =
 
 /** Units that wait at a worker, so that it need not wait for the next. */
 const QUEUE = 2;
-/** How often progress is told, in milliseconds. */
-const REPORT = 100;
+/** How often progress is told, in milliseconds; what is asked for is 100. */
+const REPORT = 80;
 
 /**
  * Does all units of a job on `workers` new workers, each taking the next unit when it has done one, and returns
@@ -34,6 +35,7 @@ export async function runOnWorkers<J extends Job>(
   const { signal, onProgress, startWorker = startWebWorker } = options;
   signal?.throwIfAborted();
   const { units } = workloadOf(job);
+  const kernel = compileKernel(); // once, so that all workers run the same optimized code
   const started: Worker[] = [];
   const aborted = Promise.withResolvers<never>();
   const abort = () => aborted.reject(signal?.reason);
@@ -45,7 +47,7 @@ export async function runOnWorkers<J extends Job>(
     const parts = Array.from({ length: options.workers }, () => {
       const worker = startWorker();
       started.push(worker);
-      return serve(worker, job, { takeUnit, onDone: () => done++ });
+      return serve(worker, { job, kernel }, { takeUnit, onDone: () => done++ });
     });
     return await Promise.race([Promise.all(parts), aborted.promise]) as PartOf<J>[];
   } finally {
@@ -58,7 +60,7 @@ export async function runOnWorkers<J extends Job>(
 /** Keeps one worker busy until no unit is left, and resolves to its part. */
 function serve(
   worker: Worker,
-  job: Job,
+  work: Extract<Order, { job: Job }>,
   { takeUnit, onDone }: { takeUnit: () => number | null; onDone: () => void },
 ): Promise<PartOf<Job>> {
   const { promise, resolve, reject } = Promise.withResolvers<PartOf<Job>>();
@@ -82,7 +84,7 @@ function serve(
     onDone();
     orderNext();
   };
-  order({ job });
+  order(work);
   for (let i = 0; i < QUEUE; i++) orderNext();
   return promise;
 }

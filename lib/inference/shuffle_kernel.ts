@@ -14,7 +14,10 @@ const LANES = 8;
 /** Rows of pairs summed in one call, so that calls stay short; a multiple of the kernel's blocks of rows. */
 const ROWS_PER_CALL = 65_536;
 
-/** Counts a {@link ShuffleJob} in the kernel. Memory: 68 bytes an area, 8 a pair of each definition. */
+/**
+ * Counts a {@link ShuffleJob} in the kernel. Memory: 68 bytes an area, 32 more where areas are put in other places,
+ * and 8 a pair of each definition.
+ */
 export function openShuffleKernel(
   job: ShuffleJob,
   module: WebAssembly.Module,
@@ -27,17 +30,22 @@ export function openShuffleKernel(
   const lanesAt = plan.reserve(LANES * n * 4);
   const streamAt = plan.reserve(STREAM_BYTES);
   const totalsAt = plan.reserve(LANES * 8);
-  const places = definitions.map(({ offsets, indices }) => ({
+  const isMoved = definitions.some(({ places }) => places !== null);
+  const movedAt = plan.reserve(isMoved ? LANES * n * 4 : 0);
+  const addresses = definitions.map(({ offsets, indices, places }) => ({
     offsets: plan.reserve(offsets.byteLength),
     indices: plan.reserve(indices.byteLength),
     values: plan.reserve(indices.length * 4),
+    places: places === null ? null : plan.reserve(places.byteLength),
   }));
   const { kernel, memory } = startKernel(module, plan.size);
   new Float32Array(memory, valuesAt, n).set(z);
-  definitions.forEach(({ offsets, indices, values }, d) => {
-    new Uint32Array(memory, places[d].offsets, offsets.length).set(offsets);
-    new Uint32Array(memory, places[d].indices, indices.length).set(indices);
-    new Float32Array(memory, places[d].values, values.length).set(values);
+  definitions.forEach(({ offsets, indices, values, places }, d) => {
+    const at = addresses[d];
+    new Uint32Array(memory, at.offsets, offsets.length).set(offsets);
+    new Uint32Array(memory, at.indices, indices.length).set(indices);
+    new Float32Array(memory, at.values, values.length).set(values);
+    if (places !== null) new Uint32Array(memory, at.places!, n).set(places);
   });
   const totals = new Float64Array(memory, totalsAt, LANES);
   const part: ShufflePart[number][] = [];
@@ -63,10 +71,15 @@ export function openShuffleKernel(
 
   function* sumLanes(d: number): Generator<void> {
     totals.fill(0);
-    const { offsets, indices, values } = places[d];
+    const { offsets, indices, values, places } = addresses[d];
+    if (places !== null) {
+      kernel.putInPlace(lanesAt, n, places, movedAt);
+      yield;
+    }
+    const from = places === null ? lanesAt : movedAt;
     for (let row = 0; row < n; row += ROWS_PER_CALL) {
       const last = Math.min(n, row + ROWS_PER_CALL);
-      kernel.sumPairs(offsets, indices, values, lanesAt, row, last, totalsAt);
+      kernel.sumPairs(offsets, indices, values, from, row, last, totalsAt);
       yield;
     }
   }

@@ -5,6 +5,7 @@
  * @module
  */
 import type { Counter } from "./job.ts";
+import { putInPlace } from "./near_places.ts";
 import type { PairLinks } from "./pair_links.ts";
 import { shuffleInto } from "./shuffle.ts";
 import {
@@ -28,7 +29,7 @@ export function openShuffleSingles(job: ShuffleJob): Counter<ShufflePart> {
       for (let p = from; p < to; p++) {
         shuffleInto(shuffled, values, openStream(job.seed, "permutation", p));
         for (const [d, pairs] of job.definitions.entries()) {
-          sums[d][p - from] = formInSingles(pairs, weights[d], shuffled);
+          sums[d][p - from] = formInSingles(pairs, weights[d], putInPlace(shuffled, pairs.places));
           yield;
         }
       }

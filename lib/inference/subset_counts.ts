@@ -24,27 +24,44 @@ export interface SubsetCounter {
   count(area: number, k: number, observed: number): { atLeast: number; atMost: number };
 }
 
+/** Sums sorted at a time; sorting more would keep the caller waiting. */
+const CHUNK = 2 ** 18;
+
 /**
- * A counter for areas with scores `z`, for subsets whose smaller side has at most `largest` areas.
+ * A counter for areas with scores `z`, for subsets whose smaller side has at most `largest` areas; pauses while it
+ * is being made, so that the caller can look up.
  *
  * All sums of subsets of all n areas are listed and sorted once for each size. For one area i, subsets
  * without i are all subsets less those with i, and those are the subsets one smaller without i whose sum
- * lacks z_i; written out, N(k, x) = Σ_j (-1)^j R(k - j, x - j z_i) with R the rank in the sorted list of that
+ * lacks z_i; written out, N(k, x) = Σ_j (-1)^j R(k - j, x - j z_i) with R the rank among the sums of that
  * size. Where more than half of the others are chosen, those left out are counted instead. Cost: a sort of
- * C(n, largest) sums; then `largest` searches an area.
+ * C(n, largest) sums; then `largest` searches an area in each list of 262,144 sums.
  */
-export function createSubsetCounter(z: Float64Array, largest: number): SubsetCounter {
-  const lists: Float64Array[] = [];
-  for (let size = 0; size <= largest; size++) lists.push(subsetSums(z, size).sort());
+export function* openSubsetCounter(
+  z: Float64Array,
+  largest: number,
+): Generator<void, SubsetCounter> {
+  const sums: Float64Array[][] = [];
+  for (let size = 0; size <= largest; size++) {
+    const lists: Float64Array[] = [];
+    for (const list of subsetSums(z, size)) {
+      lists.push(list.sort());
+      yield;
+    }
+    sums.push(lists);
+  }
   const total = z.reduce((sum, value) => sum + value, 0);
 
+  /** Alternating sum of ranks: `rankIn` is asked for each list of each size, with what x is to lack. */
   function without(
     own: number,
     size: number,
-    rankOf: (list: Float64Array, shift: number) => number,
-  ) {
+    rankIn: (list: Float64Array, shift: number) => number,
+  ): number {
     let count = 0;
-    for (let j = 0; j <= size; j++) count += (j % 2 ? -1 : 1) * rankOf(lists[size - j], j * own);
+    for (let j = 0; j <= size; j++) {
+      for (const list of sums[size - j]) count += (j % 2 ? -1 : 1) * rankIn(list, j * own);
+    }
     return count;
   }
 
@@ -70,17 +87,26 @@ export function createSubsetCounter(z: Float64Array, largest: number): SubsetCou
   };
 }
 
-/** Sums of all subsets of `size` values, in no particular order. */
-function subsetSums(values: Float64Array, size: number): Float64Array {
-  const sums = new Float64Array(subsetsOf(values.length, size));
-  let found = 0;
-  const choose = (from: number, left: number, sum: number): void => {
-    if (left === 0) {
-      sums[found++] = sum;
-      return;
+/** Sums of all subsets of `size` values, in lists of at most {@link CHUNK}, in no particular order. */
+function* subsetSums(values: Float64Array, size: number): Generator<Float64Array> {
+  const n = values.length;
+  // Places of the values chosen, ascending, and the sum of those before each place.
+  const chosen = Uint32Array.from({ length: size }, (_, level) => level);
+  const before = new Float64Array(size + 1);
+  let left = subsetsOf(n, size), list = new Float64Array(Math.min(left, CHUNK)), found = 0;
+  for (let level = 0;;) {
+    for (; level < size; level++) before[level + 1] = before[level] + values[chosen[level]];
+    list[found++] = before[size];
+    left--;
+    if (found === list.length) {
+      yield list;
+      list = new Float64Array(Math.min(left, CHUNK));
+      found = 0;
     }
-    for (let i = from; i <= values.length - left; i++) choose(i + 1, left - 1, sum + values[i]);
-  };
-  choose(0, size, 0);
-  return sums;
+    if (left === 0) return;
+    level = size - 1;
+    while (chosen[level] === n - size + level) level--;
+    chosen[level]++;
+    for (let next = level + 1; next < size; next++) chosen[next] = chosen[next - 1] + 1;
+  }
 }

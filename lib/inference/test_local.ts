@@ -8,6 +8,7 @@ import type { Weights } from "../weights/weights.ts";
 import { type Adjustment, adjustP } from "./adjust.ts";
 import { MOST_PERMUTATIONS } from "./options.ts";
 import { floorOfP, twoSidedP } from "./p_value.ts";
+import { stageOf } from "./pace.ts";
 import {
   DEFAULT_LOCAL_PERMUTATIONS,
   type LocalReference,
@@ -82,17 +83,18 @@ export async function testLocalMoran(
   if (!(level > 0 && level < 1)) {
     throw new UsageError(`Cannot test at a level of ${level}; give a number between 0 and 1`);
   }
+  const mayRedraw = redraw && permutations < MOST_PERMUTATIONS;
   let reference: LocalReference = await permuteLocalMoran(values, weights, {
-    ...options,
+    ...stageOf(options, 0, mayRedraw ? 0.5 : 1),
     permutations,
   });
   const rules = { level, adjust, tested };
   let decisions = decide(reference, rules);
   let redrawn = 0;
-  if (redraw && permutations < MOST_PERMUTATIONS && decisions.floorDecides) {
+  if (mayRedraw && decisions.floorDecides) {
     const areas = decisions.atFloor;
     const again = await permuteLocalMoran(values, weights, {
-      ...options,
+      ...stageOf(options, 0.5, 1),
       permutations: MOST_PERMUTATIONS,
       areas,
     });

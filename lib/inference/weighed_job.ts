@@ -11,6 +11,7 @@
 import { TIE } from "../statistics/standardize.ts";
 import { BLOCK, createDealer } from "./dealer.ts";
 import type { Counter, Workload } from "./job.ts";
+import { type PairTerm, pairTerm } from "./pair_term.ts";
 import type { Seed } from "./seed.ts";
 import { openStream } from "./stream.ts";
 
@@ -25,11 +26,13 @@ export interface WeighedJob {
   readonly stopping: boolean;
   /** Standard scores, length n. */
   readonly z: Float64Array;
+  /** What a neighbor adds to the sum, before its weight. */
+  readonly term: PairTerm;
   /** The areas to count, and for each its row of weights in `offsets`, scaled to a largest of 1. */
   readonly areas: Uint32Array;
   readonly offsets: Uint32Array;
   readonly weights: Float64Array;
-  /** Weighted sum of the neighbors' scores with these weights. */
+  /** Weighted sum of the neighbors' terms with these weights. */
   readonly observed: Float64Array;
   /** Counts of each area before `from`. */
   readonly atLeast: Uint32Array;
@@ -102,14 +105,15 @@ export function tallyBlock(job: WeighedJob, row: number, block: DealtBlock, befo
   return { atLeast, atMost, drawn: block.first + block.count, stopped: false };
 }
 
-/** Weighted sum of the scores drawn for an area; where it drew itself, the draw after its last takes over. */
+/** Weighted sum of the terms drawn for an area; where it drew itself, the draw after its last takes over. */
 function weighedSum(job: WeighedJob, row: number, dealt: Uint32Array, p: number): number {
   const start = job.offsets[row], length = job.offsets[row + 1] - start;
+  const area = job.areas[row], own = job.z[area];
   let sum = 0;
   for (let m = 0; m < length; m++) {
-    const area = dealt[m * BLOCK + p];
-    sum += job.weights[start + m] *
-      job.z[area === job.areas[row] ? dealt[length * BLOCK + p] : area];
+    const drawn = dealt[m * BLOCK + p];
+    const other = job.z[drawn === area ? dealt[length * BLOCK + p] : drawn];
+    sum += job.weights[start + m] * pairTerm(job.term, own, other);
   }
   return sum;
 }

@@ -8,6 +8,7 @@ import { BLOCK } from "./dealer.ts";
 import type { Counter } from "./job.ts";
 import { planMemory, STREAM_BYTES } from "./kernel_memory.ts";
 import { startKernel } from "./load_kernel.ts";
+import { largestTerm } from "./pair_term.ts";
 import { PURPOSES } from "./stream.ts";
 import {
   AREAS_PER_UNIT,
@@ -23,9 +24,12 @@ import {
   weighedWorkload,
 } from "./weighed_job.ts";
 
-/** 32-bit words of a row in the kernel: a double, two singles, start, length, two counts. */
-const ROW_WORDS = 8;
-const ABOVE = 2, BELOW = 3, START = 4, LENGTH = 5, AT_LEAST = 6, AT_MOST = 7;
+/** 32-bit words of a row in the kernel: two doubles, two singles, start, length, two counts. */
+const ROW_WORDS = 10;
+const OBSERVED = 0, OWN = 2; // both doubles
+const ABOVE = 4, BELOW = 5, START = 6, LENGTH = 7, AT_LEAST = 8, AT_MOST = 9;
+/** 32-bit words of the kernel's layout. */
+const LAYOUT_WORDS = 17;
 /** Rows counted in one call, so that calls stay short. */
 const ROWS_PER_CALL = 256;
 
@@ -37,7 +41,7 @@ export function openWeighedKernel(
   const { z, seed } = job;
   const n = z.length, draws = drawsOfRows(job), mostLinks = linksOfLargestUnit(job);
   const plan = planMemory();
-  const layoutAt = plan.reserve(64);
+  const layoutAt = plan.reserve(LAYOUT_WORDS * 4);
   const scoresAt = plan.reserve(n * 8);
   const rowsAt = plan.reserve(AREAS_PER_UNIT * ROW_WORDS * 4);
   const weightsAt = plan.reserve(mostLinks * 8);
@@ -58,7 +62,7 @@ export function openWeighedKernel(
   const list = new Uint32Array(memory, listAt, AREAS_PER_UNIT);
   const dealt = new Uint32Array(memory, dealtAt, BLOCK * draws);
   new Float64Array(memory, scoresAt, n).set(z);
-  new Uint32Array(memory, layoutAt, 16).set([
+  new Uint32Array(memory, layoutAt, LAYOUT_WORDS).set([
     seed.low,
     seed.high,
     PURPOSES.weighedBlock,
@@ -75,6 +79,7 @@ export function openWeighedKernel(
     drawnAt,
     marksAt,
     pairedAt,
+    job.term === "squaredDifference" ? 1 : 0,
   ]);
   const farthest = z.reduce((most, score) => Math.max(most, Math.abs(score)), 0);
   const part: WeighedPart[number][] = [];
@@ -88,9 +93,11 @@ export function openWeighedKernel(
     new Float32Array(memory, singlesAt, weights.length).set(weights);
     for (let a = 0; a < last - first; a++) {
       const start = job.offsets[first + a], end = job.offsets[first + a + 1];
-      const observed = job.observed[first + a];
-      const slack = singleError(job.weights.subarray(start, end), observed, farthest);
-      doubles[a * ROW_WORDS / 2] = observed;
+      const observed = job.observed[first + a], own = z[job.areas[first + a]];
+      const term = largestTerm(job.term, own, farthest);
+      const slack = singleError(job.weights.subarray(start, end), observed, term);
+      doubles[(a * ROW_WORDS + OBSERVED) / 2] = observed;
+      doubles[(a * ROW_WORDS + OWN) / 2] = own;
       singles[a * ROW_WORDS + ABOVE] = observed + slack;
       singles[a * ROW_WORDS + BELOW] = observed - slack;
       words[a * ROW_WORDS + START] = start - origin;
@@ -103,7 +110,7 @@ export function openWeighedKernel(
     const count = Math.min(BLOCK, job.to - block * BLOCK);
     kernel.dealBlock(layoutAt, block, count);
     for (let a = 0; a < active; a++) {
-      words.fill(0, list[a] * ROW_WORDS + AT_LEAST, list[a] * ROW_WORDS + ROW_WORDS);
+      words.fill(0, list[a] * ROW_WORDS + AT_LEAST, list[a] * ROW_WORDS + AT_MOST + 1);
     }
     for (let a = 0; a < active; a += ROWS_PER_CALL) {
       kernel.weighBlock(layoutAt, listAt + a * 4, Math.min(ROWS_PER_CALL, active - a), count, TIE);
@@ -149,11 +156,12 @@ export function openWeighedKernel(
 
 /**
  * Distance from the observed sum beyond which a sum in single precision is on the right side for certain: its
- * error is at most a part in 2^24 for each of its roundings of the sizes added, and ties count as equal.
+ * error is at most a part in 2^24 for each of its roundings of the sizes added (one for each addition, and up to
+ * seven in a squared difference and its product), and ties count as equal.
  */
-function singleError(weights: Float64Array, observed: number, farthest: number): number {
-  const sizes = weights.reduce((sum, weight) => sum + Math.abs(weight), 0) * farthest;
-  const error = (weights.length + 6) * 2 ** -24 * sizes + TIE;
+function singleError(weights: Float64Array, observed: number, largest: number): number {
+  const sizes = weights.reduce((sum, weight) => sum + Math.abs(weight), 0) * largest;
+  const error = (weights.length + 12) * 2 ** -24 * sizes + TIE;
   return error + (Math.abs(observed) + error) * 2 ** -22;
 }
 

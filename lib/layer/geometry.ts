@@ -76,6 +76,17 @@ export function pickFeatures(geometry: FlatGeometry, rows: Uint32Array): FlatGeo
   return picked;
 }
 
+/** Coordinates of each ring of a feature: x0, y0, x1, y1, … These are views, not copies. */
+export function ringsOf(geometry: FlatGeometry, row: number): Float64Array[] {
+  const { partStarts, ringStarts, vertexStarts, xy } = geometry;
+  const first = ringStarts[partStarts[row]];
+  const count = ringStarts[partStarts[row + 1]] - first;
+  return Array.from(
+    { length: count },
+    (_, r) => xy.subarray(2 * vertexStarts[first + r], 2 * vertexStarts[first + r + 1]),
+  );
+}
+
 function total(rows: Uint32Array, of: (row: number) => number): number {
   let sum = 0;
   for (const row of rows) sum += of(row);

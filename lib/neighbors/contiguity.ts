@@ -3,12 +3,12 @@
  *
  * @module
  */
-import type { FlatGeometry } from "../layer/geometry.ts";
+import { boundsOf, type FlatGeometry } from "../layer/geometry.ts";
 import type { Length } from "../project/length.ts";
 import { type AreaContact, areaContacts, type Scale } from "./area_contacts.ts";
 import { type Contiguity, findAsDrawn, linkPairs, MIN_STRETCH } from "./boundaries_as_drawn.ts";
 import { union } from "./combine.ts";
-import { metersPerDegree } from "./globe.ts";
+import { fitsGlobe, metersPerDegree } from "./globe.ts";
 import { once } from "./once.ts";
 import { indexSegments } from "./segment_index.ts";
 import { smallGap } from "./small_gap.ts";
@@ -40,7 +40,7 @@ export interface ContiguityFinder {
 
 /** In what units the boundaries are. */
 export interface ContiguityOptions {
-  /** Whether they are longitude and latitude in degrees. @default false */
+  /** Whether they are longitude and latitude in degrees; taken as flat where they cannot be. @default false */
   readonly geographic?: boolean;
   /** Meters in a unit of projected boundaries. @default 1 */
   readonly metersPerUnit?: number;
@@ -58,7 +58,8 @@ export function contiguityFinder(
   geometry: FlatGeometry,
   options: ContiguityOptions = {},
 ): ContiguityFinder {
-  const { geographic = false, metersPerUnit = 1 } = options;
+  const { metersPerUnit = 1 } = options;
+  const geographic = options.geographic === true && fitsGlobe(boundsOf(geometry) ?? [0, 0, 0, 0]);
   const scale = (y: number): Scale =>
     geographic ? metersPerDegree(y) : { east: metersPerUnit, north: metersPerUnit };
   const drawn = once(() => findAsDrawn(geometry, geographic));

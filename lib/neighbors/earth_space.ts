@@ -111,7 +111,8 @@ function fillTable(
         let slot = found < width ? found++ : width;
         for (; slot > 0; slot--) {
           const before = start + slot - 1;
-          const ahead = lengths[before] < length || (lengths[before] === length && near[before] < id);
+          const ahead = lengths[before] < length ||
+            (lengths[before] === length && near[before] < id);
           if (ahead) break;
           if (slot === width) continue;
           near[before + 1] = near[before];

@@ -7,6 +7,14 @@ import type { Box } from "../layer/geometry.ts";
 import type { Scale } from "./area_contacts.ts";
 
 /**
+ * Whether a box can be one of degrees. Files whose format knows only longitude and latitude (GeoJSON) are
+ * often written in other units all the same; these have no poles and no seam.
+ */
+export function fitsGlobe([west, south, east, north]: Box): boolean {
+  return west >= -360 && east <= 360 && south >= -90 && north <= 90;
+}
+
+/**
  * Coordinates in which places that are one on the globe are equal: the eastern border moves onto the western
  * one where the layer goes all the way around, and every vertex at a pole to one longitude. The same array when
  * nothing moves.

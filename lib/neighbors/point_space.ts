@@ -1,13 +1,10 @@
 /**
- * Points and what distance means between them: a plane, or an ellipsoid.
+ * What can be asked about points, whether they lie in a plane or on an ellipsoid.
  *
  * @module
  */
-import type { Ellipsoid } from "../project/ellipsoid.ts";
 import type { ConnectingDistances } from "./distances.ts";
-import { earthSpace } from "./earth_space.ts";
 import type { NearestLinks } from "./nearest.ts";
-import { planeSpace } from "./plane_space.ts";
 import type { PointGraph } from "./rule_tree.ts";
 import type { Topology } from "./topology.ts";
 
@@ -34,14 +31,4 @@ export interface PointSpace {
   readonly connecting: () => ConnectingDistances;
   /** How many points share their place with another one. */
   readonly countSharing: () => number;
-}
-
-/**
- * Opens the space of some points; indexes are made when first asked for.
- *
- * @param points x and y of each, in meters or map units; with an ellipsoid, longitude and latitude in degrees.
- * @param ellipsoid What to measure on; null for the plane.
- */
-export function pointSpace(points: Float64Array, ellipsoid: Ellipsoid | null = null): PointSpace {
-  return ellipsoid ? earthSpace(points, ellipsoid) : planeSpace(points);
 }

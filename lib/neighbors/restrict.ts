@@ -36,14 +36,6 @@ export function restrict(topology: Topology, usable: Uint8Array): Topology {
   };
 }
 
-/** Positions whose mask is not 0, ascending. */
-export function positionsOf(mask: Uint8Array): Uint32Array {
-  const positions = new Uint32Array(mask.length);
-  let size = 0;
-  for (let i = 0; i < mask.length; i++) if (mask[i]) positions[size++] = i;
-  return positions.slice(0, size);
-}
-
 function ranks(mask: Uint8Array): { of: Uint32Array; count: number } {
   const of = new Uint32Array(mask.length);
   let count = 0;

@@ -137,6 +137,8 @@ export interface RuleNeeds {
   readonly points: boolean;
   /** Boundaries. */
   readonly boundaries: boolean;
+  /** The widest `snap` of any term; null for none. */
+  readonly snap: Length | null;
   /** Fields of `same` terms, each once. */
   readonly fields: readonly string[];
   /** Files of `links` terms, each once. */
@@ -149,6 +151,8 @@ export function ruleNeeds(rule: Rule): RuleNeeds {
   return {
     points: parts.some(needsPoints),
     boundaries: parts.some(({ kind }) => kind === "touching" || kind === "edge"),
+    snap: parts.flatMap((part) => "snap" in part && part.snap ? [part.snap] : [])
+      .reduce<Length | null>((a, b) => a && a.meters >= b.meters ? a : b, null),
     fields: unique(parts.flatMap((part) => part.kind === "same" ? [part.field] : [])),
     linkFiles: unique(parts.flatMap((part) => part.kind === "links" ? [part.file] : [])),
   };

@@ -9,7 +9,8 @@ import { type Contiguity, type ContiguityFinder, contiguityFinder } from "./cont
 import type { Ground } from "./ground.ts";
 import { linksTopology } from "./links.ts";
 import { once } from "./once.ts";
-import { type PointSpace, pointSpace } from "./point_space.ts";
+import { openSpace } from "./open_space.ts";
+import type { PointSpace } from "./point_space.ts";
 import { restrict } from "./restrict.ts";
 import { linkSame } from "./same.ts";
 import type { Topology } from "./topology.ts";
@@ -58,7 +59,7 @@ function contiguityOf(ground: Ground): ContiguityFinder {
 
 function spaceOf({ space, points, usable, ellipsoid }: Ground): PointSpace {
   if (space) return space;
-  if (points) return pointSpace(points.filter((_, at) => usable[at >> 1] === 1), ellipsoid);
+  if (points) return openSpace(points.filter((_, at) => usable[at >> 1] === 1), ellipsoid);
   throw new UnfitDataError(
     "Cannot measure distance as the layer has no coordinate reference system that allows it; " +
       'choose one with --metric, or "--metric planar" for map units',

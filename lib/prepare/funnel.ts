@@ -3,8 +3,8 @@
  *
  * @module
  */
-import { poissonQuantiles } from "./poisson_quantiles.ts";
-import type { RateCounts } from "./rate_moments.ts";
+import { type CountTable, countTable, tableQuantiles } from "./count_table.ts";
+import { type RateCounts, rateMoments } from "./rate_moments.ts";
 
 /** Where a count lies against the funnel limits, from high to low. */
 export const FUNNEL_WORDS = [
@@ -26,23 +26,25 @@ export interface FunnelLimits {
 }
 
 /**
- * Exact Poisson limits for a count whose expectation is `expected`, at 95 % and 99.8 %, as in the funnel plot
- * of Spiegelhalter 2005 (Statistics in Medicine 24, 1185–1202), without interpolation: each limit is the smallest
- * count whose cumulated probability reaches 0.001, 0.025, 0.975 or 0.999. A count on a limit is inside.
+ * Exact limits of a count at 95 % and 99.8 %, as in the funnel plot of Spiegelhalter 2005 (Statistics in
+ * Medicine 24, 1185–1202), without interpolation: each limit is the smallest count whose cumulated probability
+ * reaches 0.001, 0.025, 0.975 or 0.999. A count on a limit is inside.
  */
-export function funnelLimits(expected: number): FunnelLimits {
-  const [low998, low95, high95, high998] = poissonQuantiles(expected, [0.001, 0.025, 0.975, 0.999]);
+export function funnelLimits(table: CountTable): FunnelLimits {
+  const [low998, low95, high95, high998] = tableQuantiles(table, [0.001, 0.025, 0.975, 0.999]);
   return { low998, low95, high95, high998 };
 }
 
 /**
- * The word of each area, its count against the overall rate times its population. Cost: about 18 sqrt(expected) steps an
- * area.
+ * The word of each area: its count against what the overall rate would give its population, Poisson, or binomial for a
+ * share. Cost: about 18 sqrt(expected count) steps an area.
  */
-export function funnelWords({ cases, population }: RateCounts): FunnelWord[] {
-  const all = population.reduce((sum, size) => sum + size, 0);
-  const rate = cases.reduce((sum, count) => sum + count, 0) / all;
-  return Array.from(cases, (count, i) => funnelWord(count, funnelLimits(rate * population[i])));
+export function funnelWords(counts: RateCounts): FunnelWord[] {
+  const { rate } = rateMoments(counts);
+  return Array.from(
+    counts.cases,
+    (count, i) => funnelWord(count, funnelLimits(countTable(counts, i, rate))),
+  );
 }
 
 function funnelWord(count: number, limits: FunnelLimits): FunnelWord {

@@ -20,14 +20,25 @@ export interface CheckedCounts {
   readonly notes: readonly string[];
 }
 
+/** Options of {@link checkCounts}. */
+export interface CountOptions {
+  /** Whether nobody counts twice, so that cases cannot exceed the population. @default false */
+  readonly share?: boolean;
+}
+
 /**
  * Decides which rows have a rate. A row without cases or without a population is left out and says which; so is a
  * population of 0, pointed out where it has cases.
  *
- * @throws {UnfitDataError} for a negative population, and for cases that are negative or no whole number: these are faults of
- * the file, or the wrong field.
+ * @throws {UnfitDataError} for a negative population, for cases that are negative or no whole number, and for a share for
+ * cases above the population or a population that is no whole number: these are faults of the file, or the wrong
+ * field.
  */
-export function checkCounts(cases: RateField, population: RateField): CheckedCounts {
+export function checkCounts(
+  cases: RateField,
+  population: RateField,
+  { share = false }: CountOptions = {},
+): CheckedCounts {
   const count = cases.numbers.values, size = population.numbers.values;
   checkRows(
     cases,
@@ -41,6 +52,7 @@ export function checkCounts(cases: RateField, population: RateField): CheckedCou
     if (other !== null) return `${population.name}: ${other}`;
     return size[row] === 0 ? `${population.name}: population is 0` : null;
   });
+  if (share) checkShare(cases, population);
   const strange = count.filter((value, row) => value > 0 && size[row] === 0).length;
   const notes = strange === 0 ? [] : [
     `${strange} of the areas left out for a population of 0 in ${population.name} have cases in ${cases.name}`,
@@ -59,5 +71,19 @@ function checkRows(
     `Cannot make a rate with field ${name} as row ${row + 1} (_row ${row}) holds ${
       numbers.values[row]
     } and ${rule}; mend it or leave the area out with --where`,
+  );
+}
+
+function checkShare(cases: RateField, population: RateField): void {
+  checkRows(population, Number.isInteger, "the population of a share is whole");
+  const count = cases.numbers.values, size = population.numbers.values;
+  const row = count.findIndex((value, row) => value > size[row]);
+  if (row < 0) return;
+  throw new UnfitDataError(
+    `Cannot make a share as row ${row + 1} (_row ${row}) has ${
+      count[row]
+    } cases (${cases.name}) in a population of ${
+      size[row]
+    } (${population.name}); leave out --share where one can count twice, or mend the fields`,
   );
 }

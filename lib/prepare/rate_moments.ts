@@ -10,6 +10,8 @@ export interface RateCounts {
   readonly cases: Float64Array;
   /** Above 0; need not be whole (person-years, estimates). */
   readonly population: Float64Array;
+  /** True where nobody counts twice, so that cases cannot exceed the population, which is whole. @default false */
+  readonly share?: boolean;
 }
 
 /** What {@link rateMoments} finds; rates are cases per one of the population. */

@@ -13,6 +13,12 @@ export const TRANSFORMS = ["none", "log", "log1p", "sqrt", "rank", "normal-score
 /** See {@link TRANSFORMS}. */
 export type Transform = typeof TRANSFORMS[number];
 
+/** What {@link transformValues} needs besides. */
+export interface TransformOptions {
+  /** What to call the value at a position in a message. */
+  readonly nameOf: (at: number) => string;
+}
+
 /** Functions of one value, with the values they are defined for. */
 const SINGLE = {
   log: { of: Math.log, defined: (x: number) => x > 0, takes: "only values above 0" },
@@ -26,13 +32,12 @@ const SINGLE = {
  * that every engine tests the same numbers.
  *
  * @param values Finite values of the areas that are used.
- * @param nameOf What to call the value at a position in a message.
  * @throws {UnfitDataError} where a value has no logarithm or root.
  */
 export function transformValues(
   values: Float64Array,
   transform: Transform,
-  nameOf: (at: number) => string,
+  { nameOf }: TransformOptions,
 ): Float64Array {
   if (transform === "none") return values;
   if (transform === "rank") return ranks(values);

@@ -71,3 +71,24 @@ export function formatLength(meters: number): string {
   const kilometers = meters / 1000;
   return `${kilometers < 100 ? Number(kilometers.toPrecision(3)) : Math.round(kilometers)} km`;
 }
+
+/**
+ * A length as text in m or km, of at most so many significant digits and rounded up, so that what was measured
+ * stays within what is written; {@link parseLength} reads it back.
+ *
+ * @param meters Above 0.
+ */
+export function lengthAtLeast(meters: number, digits: number): string {
+  const inKilometers = meters >= 1000;
+  const amount = inKilometers ? meters / 1000 : meters;
+  const step = 10 ** (Math.floor(Math.log10(amount)) - digits + 1);
+  const textOf = (value: number) => {
+    const rounded = Number(value.toPrecision(digits));
+    const plain = rounded < 1e-6 ? rounded.toFixed(12).replace(/0+$/, "") : String(rounded);
+    return `${plain}${inKilometers ? "km" : "m"}`;
+  };
+  const text = textOf(amount);
+  return parseLength(text).meters < meters
+    ? textOf(Number(amount.toPrecision(digits)) + step)
+    : text;
+}

@@ -3,9 +3,9 @@
  *
  * @module
  */
-import type { FlatGeometry } from "../layer/geometry.ts";
+import { type FlatGeometry, ringsOf } from "../layer/geometry.ts";
 import type { Layer } from "../layer/layer.ts";
-import { crossesItself } from "./self_crossing.ts";
+import { findSelfCrossings } from "./self_crossing.ts";
 
 /** Rows by what is odd about their geometry; all lists ascending. */
 export interface GeometryHealth {
@@ -45,21 +45,10 @@ export function geometryHealth(layer: Layer): GeometryHealth {
     shortRings: polygons.filter(someRing((ring) => ring.length < 8)),
     openRings: polygons.filter(someRing(isOpen)),
     flatRings: polygons.filter(someRing((ring) => signedArea(ring) === 0)),
-    selfCrossing: polygons.filter((row) => crossesItself(ringsOf(geometry, row))),
+    selfCrossing: findSelfCrossings(geometry),
     duplicates: findDuplicates(geometry),
     multipart: rows.filter((row) => geometry.partStarts[row + 1] - geometry.partStarts[row] > 1),
   };
-}
-
-/** Coordinates of each ring of a row: x0, y0, x1, y1, … */
-function ringsOf(geometry: FlatGeometry, row: number): Float64Array[] {
-  const { partStarts, ringStarts, vertexStarts, xy } = geometry;
-  const first = ringStarts[partStarts[row]];
-  const count = ringStarts[partStarts[row + 1]] - first;
-  return Array.from(
-    { length: count },
-    (_, r) => xy.subarray(2 * vertexStarts[first + r], 2 * vertexStarts[first + r + 1]),
-  );
 }
 
 function isOpen(ring: Float64Array): boolean {

@@ -3,9 +3,23 @@
  *
  * @module
  */
+import { type FlatGeometry, GEOMETRY_KINDS, ringsOf } from "../layer/geometry.ts";
 
 /** Segments as x0, y0, x1, y1 with x0 <= x1, four numbers each, in order of x0. */
 type Segments = Float64Array;
+
+/**
+ * The polygons whose boundary crosses itself, ascending. Their neighbors are found as those of any other area;
+ * it is area and centroid that cannot be trusted. Cost: see {@link crossesItself}.
+ */
+export function findSelfCrossings(geometry: FlatGeometry): number[] {
+  const polygon = GEOMETRY_KINDS.indexOf("polygon");
+  const crossing: number[] = [];
+  geometry.kinds.forEach((kind, row) => {
+    if (kind === polygon && crossesItself(ringsOf(geometry, row))) crossing.push(row);
+  });
+  return crossing;
+}
 
 /**
  * Whether any two segments of these rings cross at a point inside both.

@@ -4,13 +4,20 @@
  * @module
  */
 import { readFile } from "node:fs/promises";
-import { basename } from "node:path";
+import { basename, extname } from "node:path";
 import { UnreadableError, UsageError } from "../layer/errors.ts";
 import type { ColumnValues, Table } from "../layer/layer.ts";
 import { suggestion } from "../layer/nearest_name.ts";
 import { parseDelimited } from "./delimited.ts";
 import { readSheetRows } from "./spreadsheet.ts";
 import { decodeText } from "./text_encoding.ts";
+
+const TABLE_ENDINGS = new Set([".csv", ".tsv", ".txt", ".xlsx"]);
+
+/** Whether a path is read as a table, by its ending. */
+export function isTable(path: string): boolean {
+  return TABLE_ENDINGS.has(extname(path).toLowerCase());
+}
 
 /** Options of {@link readTable}; what is left out is detected. */
 export interface TableOptions {

@@ -5,6 +5,7 @@
  */
 import { boundsOf, type Box, type FlatGeometry } from "../layer/geometry.ts";
 import type { Crs } from "../layer/layer.ts";
+import { fitsGlobe } from "../neighbors/globe.ts";
 import { unwrapLongitudes } from "../project/antimeridian.ts";
 import { openProjection } from "../project/projection.ts";
 
@@ -21,6 +22,8 @@ export interface MapFrame {
   /** Size in figure units. */
   readonly width: number;
   readonly height: number;
+  /** Layer units around the globe, 360 for degrees; 0 where the map is flat. */
+  readonly turn: number;
   /** x of a layer coordinate in map units, to the right. */
   readonly across: (x: number) => number;
   /** y of a layer coordinate in map units, downward. */
@@ -47,10 +50,11 @@ export function fitMap(
   layer: { readonly geometry: FlatGeometry; readonly crs: Crs | null },
   room: (ratio: number) => MapRoom,
 ): MapFrame | null {
-  const geographic = layer.crs?.geographic ?? false;
+  const whole = boundsOf(layer.geometry);
+  if (whole === null) return null;
+  const geographic = layer.crs?.geographic === true && fitsGlobe(whole);
   const geometry = geographic ? joinedAcross180(layer.geometry) : layer.geometry;
-  const box = boundsOf(geometry);
-  if (box === null) return null;
+  const box = boundsOf(geometry) ?? whole;
   const [west, south, east, north] = withSize(box);
   const squeeze = geographic ? Math.cos((south + north) / 2 * Math.PI / 180) : 1;
   const wide = (east - west) * squeeze, high = north - south;
@@ -61,6 +65,7 @@ export function fitMap(
     geometry,
     width: wide * scale,
     height: high * scale,
+    turn: geographic ? 360 : 0,
     across: (x) => Math.round((x - west) * squeeze * scale * UNITS),
     down: (y) => Math.round((north - y) * scale * UNITS),
     metersPerUnit: meters && meters / scale,

@@ -21,7 +21,12 @@ export interface ShapeStyle {
  * Vertices that fall on the unit of the vertex before, or go straight on, are dropped; what is too
  * small to see leaves a dot. Cost: the feature's vertices.
  */
-export function addShape(path: RelativePath, frame: MapFrame, row: number, style: ShapeStyle) {
+export function addShape(
+  path: RelativePath,
+  frame: MapFrame,
+  row: number,
+  style: ShapeStyle,
+): void {
   const kind = GEOMETRY_KINDS[frame.geometry.kinds[row]];
   if (kind === "polygon") addPolygon(path, frame, row);
   else if (kind === "line") addLine(path, frame, row);

@@ -4,7 +4,7 @@
  * @module
  */
 import { counted } from "../sweep/phrases.ts";
-import { facts, figure, section } from "./html_parts.ts";
+import { type Fact, facts, figure, section } from "./html_parts.ts";
 import { type Markup, markup } from "./markup.ts";
 import { decimalText, lengthText, valueText, wholeText } from "./number_text.ts";
 import type { FigureName } from "./plots.ts";
@@ -23,7 +23,7 @@ export function neighborsSection(
 ${
       figure(
         figures.get("neighbor_counts"),
-        `Areas by their number of neighbors under the main definition (${neighbors.rule}). links.fgb shows every link on a map.`,
+        `Areas by their number of neighbors under the main definition (${neighbors.rule}).`,
       )
     }<div>${
       facts([
@@ -42,10 +42,20 @@ ${
         ["Without a neighbor", counted(neighbors.islands, "area")],
         ["Connected pieces", wholeText(neighbors.components)],
         ["One-way links", wholeText(neighbors.oneWayLinks)],
-        ["Longest link", longestLink(input)],
+        ["Density", percentOf(neighbors.density)],
+        ["Longest link", lengthIn(input, neighbors.longestLink)],
+        ...distanceFacts(input),
+        ...boundaryFacts(input),
       ])
     }</div>
 </div>
+${
+      figure(
+        figures.get("links_map"),
+        "Each pair of neighbors as a line between the points of its areas; areas without a neighbor as squares. " +
+          "links.fgb holds every link with its weight and length.",
+      )
+    }
 `,
   );
 }
@@ -57,9 +67,39 @@ const STANDARDIZED = {
   variance: "scaled to even out their variance",
 } as const;
 
-function longestLink({ results }: ReportInput): string {
-  const { longestLink } = results.runs[0].neighbors;
-  if (longestLink === null) return "not measured";
+/** Distances that a band would need, and points that are one. */
+function distanceFacts(input: ReportInput): (Fact | null)[] {
+  const { noneAlone, oneComponent, sharingPlaces } = input.results.runs[0].diagnostics;
+  return [
+    noneAlone === null ? null : ["No area alone within", lengthIn(input, noneAlone)],
+    oneComponent === null ? null : ["One piece within", lengthIn(input, oneComponent)],
+    sharingPlaces ? ["At the point of another", counted(sharingPlaces, "area")] : null,
+  ];
+}
+
+/** How the boundaries fit together. */
+function boundaryFacts({ results }: ReportInput): (Fact | null)[] {
+  const { boundaries, selfCrossing } = results.runs[0].diagnostics;
+  if (boundaries === null) return [];
+  const { nearVertexPairs, junctionPairs, overlapPairs, snappedPairs, nearMisses } = boundaries;
+  const unlessNone = (term: string, count: number): Fact | null =>
+    count > 0 ? [term, counted(count, "pair")] : null;
+  return [
+    unlessNone("Touching within rounding only", nearVertexPairs),
+    unlessNone("Touching at T-junctions only", junctionPairs),
+    unlessNone("Overlapping", overlapPairs),
+    unlessNone("Joined by snap", snappedPairs),
+    ["Nearly touching", counted(nearMisses, "pair")],
+    selfCrossing > 0 ? ["Crossing themselves", counted(selfCrossing, "area")] : null,
+  ];
+}
+
+function percentOf(share: number | null): string {
+  return share === null ? "not defined" : `${valueText(100 * share)} % of all that could be`;
+}
+
+function lengthIn({ results }: ReportInput, length: number | null): string {
+  if (length === null) return "not measured";
   const unit = results.layer.metricCrs?.unit ?? "m";
-  return unit === "m" ? lengthText(longestLink) : `${valueText(longestLink)} ${unit}`;
+  return unit === "m" ? lengthText(length) : `${valueText(length)} ${unit}`;
 }

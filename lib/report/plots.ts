@@ -4,6 +4,7 @@
  * @module
  */
 import { classMap } from "./class_map.ts";
+import { linksMap } from "./links_map.ts";
 import { moranScatter } from "./moran_scatter.ts";
 import { neighborCountChart } from "./neighbor_counts.ts";
 import { referenceHistogram } from "./reference_distribution.ts";
@@ -17,6 +18,7 @@ export const FIGURE_NAMES = [
   "reference_distribution",
   "sweep",
   "neighbor_counts",
+  "links_map",
 ] as const;
 
 /** See {@link FIGURE_NAMES}. */
@@ -34,6 +36,7 @@ export function plotFigures(input: ReportInput): Map<FigureName, string> {
     reference_distribution: referenceHistogram(input),
     sweep: sweepFigure(input),
     neighbor_counts: neighborCountChart(input),
+    links_map: linksMap(input),
   };
   const figures = new Map<FigureName, string>();
   for (const name of FIGURE_NAMES) {

@@ -8,6 +8,15 @@ import type { Crs } from "../layer/layer.ts";
 import type { Caution } from "../sweep/cautions.ts";
 import type { AreaResults, Results } from "../write/results.ts";
 
+/** Links of the main definition, for their map. */
+export interface DrawnLinks {
+  /** Rows of the layer, parallel; each directed link once. */
+  readonly from: Uint32Array;
+  readonly to: Uint32Array;
+  /** Point of each area in the layer's own coordinates, length 2n; NaN where it has none. */
+  readonly places: Float64Array;
+}
+
 /** Everything a report shows. It holds no clock, so that the same findings give the same page. */
 export interface ReportInput {
   readonly results: Results;
@@ -17,6 +26,8 @@ export interface ReportInput {
   readonly geometry: FlatGeometry;
   /** What those coordinates mean; null where the file does not say. */
   readonly crs: Crs | null;
+  /** Null to draw no links. */
+  readonly links: DrawnLinks | null;
   /** Sum of all weights of the main definition, S0. */
   readonly s0: number;
   /** Names of the areas, length n; null to call them by their row number. */

@@ -3,6 +3,7 @@
  *
  * @module
  */
+import type { RateResults } from "../write/rate_results.ts";
 import type { Run } from "../write/results.ts";
 import type { Fact } from "./html_parts.ts";
 import { wholeText } from "./number_text.ts";
@@ -38,8 +39,8 @@ export function valueMethods(run: Run): Fact[] {
   return [
     ["Tested rates", testedText(run)],
     ["Shrunken rates", SHRUNKEN],
-    ["Funnel", FUNNEL],
-    ["Chance at one risk", riskText(rate.constantRisk.maps)],
+    ["Funnel", funnelText(rate)],
+    ["Chance at one risk", riskText(rate)],
   ];
 }
 
@@ -58,12 +59,16 @@ const SHRUNKEN =
   "b + (r − b) a / (a + b/n) with the moments above (Marshall 1991); for the local form b, a and n̄ are those of the " +
   "area and its neighbors under the main definition, and an area without a neighbor has none.";
 
-const FUNNEL =
-  "Exact Poisson limits of the count that the overall rate would give the area's population (Spiegelhalter 2005), without " +
-  "interpolation: a count above the limit has at most 2.5\u00A0% or 0.1\u00A0% chance, and one below it likewise.";
+function funnelText({ share }: RateResults): string {
+  return `Exact ${
+    share ? "binomial" : "Poisson"
+  } limits of the count that the overall rate would give the area's population (Spiegelhalter 2005), without interpolation: a count above the limit has at most 2.5\u00A0% or 0.1\u00A0% chance, and one below it likewise.`;
+}
 
-function riskText(maps: number): string {
+function riskText({ constantRisk: { maps }, share }: RateResults): string {
   return `On ${
     wholeText(maps)
-  } maps the same number of cases was dealt out over the populations at one risk for all (multinomial; Waller & Gotway 2004); the values were made anew on each, with their own mean and variance. Moran's I is compared two-sided. Over-dispersion is Σ y (y − 1) / p over its expectation, with p an area's share of the population (Potthoff & Whittinghill 1966), one-sided on the same maps.`;
+  } maps the same number of cases was dealt out over the populations at one risk for all (${
+    share ? "multivariate hypergeometric, as nobody counts twice" : "multinomial"
+  }; Waller & Gotway 2004); the values were made anew on each, with their own mean and variance. Moran's I is compared two-sided. Over-dispersion is Σ y (y − 1) / p over its expectation, with p an area's share of the population (Potthoff & Whittinghill 1966), one-sided on the same maps.`;
 }

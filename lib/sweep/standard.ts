@@ -3,12 +3,9 @@
  *
  * @module
  */
-import { distance } from "../neighbors/gabriel.ts";
-import { nearestTable } from "../neighbors/nearest_table.ts";
-import { indexPoints } from "../neighbors/point_index.ts";
-import { roundPoints } from "../neighbors/rounded_points.ts";
+import type { PointSpace } from "../neighbors/point_space.ts";
 import { parseRule, type Rule } from "../neighbors/rule.ts";
-import { parseLength } from "../project/length.ts";
+import { lengthAtLeast } from "../project/length.ts";
 
 /** One way to say who is a neighbor and how much each counts. */
 export interface Definition {
@@ -20,11 +17,8 @@ export interface Definition {
 /** What the standard sweep depends on. */
 export interface StandardOptions {
   readonly shape: "polygon" | "point";
-  /**
-   * Representative points of the usable areas, x0, y0, x1, y1, … in meters, NaN for an area without a
-   * place; null where distance cannot be measured.
-   */
-  readonly points: Float64Array | null;
+  /** Distance between the usable areas; null where it cannot be measured. */
+  readonly space: PointSpace | null;
   /** Usable areas. */
   readonly count: number;
 }
@@ -41,6 +35,8 @@ const NEAREST = [4, 5, 6, 8, 10, 12];
 /** Bands reach as far as the median distance to these nearest areas. */
 const BANDS = [4, 6, 8, 12, 16];
 const GRAPHS = ["triangulated", "gabriel"];
+/** Digits of their lengths: what the report prints is what was computed, and a rerun reads it back. */
+const BAND_DIGITS = 6;
 /** Graphs that stand in for the contiguities where areas are points. */
 const POINT_GRAPHS = [...GRAPHS, "relative", "sphere"];
 /** Fewer points than this make no graph worth the name. */
@@ -54,15 +50,15 @@ const WEIGHTED = 12, FALLING_OVER = 6;
  * Definitions that cannot exist here (a 12th nearest of 9 areas, a band of length 0) are left out and named
  * in the notes. Cost: one search for the 16 nearest of each area.
  */
-export function standardDefinitions({ shape, points, count }: StandardOptions): StandardSweep {
+export function standardDefinitions({ shape, space, count }: StandardOptions): StandardSweep {
   const contiguities = shape === "polygon" ? CONTIGUITIES.map(equal) : [];
-  if (points === null) {
+  if (space === null) {
     return {
       definitions: contiguities,
       notes: ["Without a CRS or a planar metric no definition by distance could be tried"],
     };
   }
-  const spacing = spacingOf(points);
+  const spacing = spacingOf(space);
   const { lengths, located } = spacing;
   const graphs = shape === "polygon" ? GRAPHS : POINT_GRAPHS;
   return {
@@ -70,12 +66,15 @@ export function standardDefinitions({ shape, points, count }: StandardOptions): 
       ...contiguities,
       ...NEAREST.filter((k) => k < located).map((k) => equal(`nearest:${k}`)),
       ...BANDS.filter((k) => lengths.has(k)).map((k) => equal(`within:${lengths.get(k)}`)),
-      ...(located < FEWEST_IN_GRAPH ? [] : graphs.map(equal)),
+      ...(located < FEWEST_IN_GRAPH || !space.planar ? [] : graphs.map(equal)),
       ...weightedDefinitions(spacing),
     ],
-    notes: notesOf(spacing, count),
+    notes: [...notesOf(spacing, count), ...(space.planar ? [] : [NO_GRAPHS])],
   };
 }
+
+const NO_GRAPHS =
+  "Graphs on the points are defined in a plane, so none could be tried on the ellipsoid";
 
 function equal(rule: string): Definition {
   return { rule: parseRule(rule), weights: "equal" };
@@ -91,42 +90,21 @@ interface Spacing {
   readonly coincident: boolean;
 }
 
-function spacingOf(points: Float64Array): Spacing {
-  const index = indexPoints(roundPoints(points));
-  const located = index.count;
-  const width = Math.max(0, Math.min(Math.max(...BANDS), located - 1));
-  const { near } = nearestTable(index, width);
-  const toNearest = (k: number) =>
-    Float64Array.from(
-      { length: located },
-      (_, at) => distance(index.xy, at, near[at * width + k - 1]),
-    );
+function spacingOf({ located, toNearest }: PointSpace): Spacing {
+  const distancesTo = (k: number) => toNearest(k).filter((distance) => !Number.isNaN(distance));
   const lengths = new Map<number, string>();
-  for (const k of BANDS.filter((k) => k <= width)) {
-    const length = median(toNearest(k));
-    if (length > 0) lengths.set(k, lengthText(length));
+  // The farthest first: the search for it serves all others.
+  for (const k of BANDS.filter((k) => k < located).reverse()) {
+    const length = median(distancesTo(k));
+    if (length > 0) lengths.set(k, lengthAtLeast(length, BAND_DIGITS));
   }
-  return { located, lengths, coincident: width > 0 && toNearest(1).includes(0) };
+  return { located, lengths, coincident: located > 1 && distancesTo(1).includes(0) };
 }
 
 function median(values: Float64Array): number {
   const sorted = values.toSorted();
   const middle = sorted.length >> 1;
   return sorted.length % 2 === 1 ? sorted[middle] : (sorted[middle - 1] + sorted[middle]) / 2;
-}
-
-/**
- * A length in at most six significant digits, rounded up so that the pair it was measured on stays
- * within it. What the report prints is what was computed, and a rerun reads it back.
- */
-function lengthText(meters: number): string {
-  const inKilometers = meters >= 1000;
-  const amount = inKilometers ? meters / 1000 : meters;
-  const step = 10 ** (Math.floor(Math.log10(amount)) - 5);
-  const rounded = Number(amount.toPrecision(6));
-  const textOf = (value: number) => `${Number(value.toPrecision(6))}${inKilometers ? "km" : "m"}`;
-  const text = textOf(rounded);
-  return parseLength(text).meters < meters ? textOf(rounded + step) : text;
 }
 
 function weightedDefinitions({ located, lengths, coincident }: Spacing): Definition[] {

@@ -82,6 +82,11 @@ export function weightRuleText(rule: WeightRule): string {
   }`;
 }
 
+/** Whether a rule looks at distance. */
+export function fallsWithDistance(rule: WeightRule): boolean {
+  return rule.kind === "inverse" || "bandwidth" in rule;
+}
+
 /** Word and argument around the first colon, without spaces at their ends. */
 function split(text: string): [word: string, argument: string] {
   const colon = text.indexOf(":");

@@ -14,6 +14,7 @@ export const rateSchema = z.object({
   cases: z.string().describe("Field of the cases"),
   population: z.string().describe("Field of the population"),
   per: z.number().describe("Rates are per so many of the population"),
+  share: z.boolean().describe("True where nobody counts twice: cases are part of the population"),
   totalCases: z.number(),
   totalPopulation: z.number(),
   overall: figure.describe("All cases over the whole population, per `per`"),
@@ -38,7 +39,7 @@ export const rateSchema = z.object({
     p: figure.describe("Two-sided, of the main definition's Moran's I"),
   }),
   funnel: z.record(z.enum(FUNNEL_WORDS), count).describe(
-    "Areas by where their count lies against exact Poisson limits of 95 % and 99.8 %",
+    "Areas by where their count lies against exact limits of 95 % and 99.8 %, binomial for a share, else Poisson",
   ),
 });
 /** What a run found on a rate. */

@@ -46,9 +46,27 @@ const neighbors = z.object({
   longestLink: figure.describe(
     "In meters (or map units with a planar metric); null without distances",
   ),
+  density: figure.describe("Directed links as a share of all there could be"),
   neighborCounts: z.array(z.object({ neighbors: count, areas: count })),
 });
 export type NeighborSummary = z.infer<typeof neighbors>;
+
+const diagnostics = z.object({
+  sharingPlaces: count.nullable()
+    .describe("Areas whose point is that of another one too; null without distances"),
+  noneAlone: figure.describe("Shortest distance at which no area is alone"),
+  oneComponent: figure.describe("Shortest distance at which all areas hang together"),
+  boundaries: z.object({
+    nearVertexPairs: count.describe("Pairs that share a vertex only within the tolerance"),
+    junctionPairs: count.describe("Pairs where only a vertex lies on a segment of the other"),
+    overlapPairs: count,
+    snappedPairs: count.describe("Pairs that touch only because snap closed a gap"),
+    nearMisses: count.describe("Pairs within a small gap of each other that do not touch"),
+    widestGap: figure.describe("The snap that would join all of these, in meters"),
+  }).nullable().describe("How boundaries fit together, in unordered pairs; null without polygons"),
+  selfCrossing: count.describe("Polygons whose boundary crosses itself"),
+}).describe("Facts about the map that hold under every neighbor rule");
+export type MapDiagnostics = z.infer<typeof diagnostics>;
 
 const globalMoran = z.object({
   value: figure,
@@ -95,6 +113,7 @@ const TESTED_TRANSFORMS = [...TRANSFORMS, "freeman-tukey", "standardized"] as co
 const run = z.object({
   indicator: z.string(),
   neighbors,
+  diagnostics,
   weights: z.string(),
   standardize: z.enum(["row", "none", "total", "variance"]),
   values: z.object({

@@ -87,7 +87,7 @@ Deno.test("inspect looks at the first layer with geometry of several and lists t
     assert.match(first.stdout, /^several\.gpkg: layer north, 16 features \(polygon\)$/m);
     assert.match(
       first.stdout,
-      /^Also here  south \(16 Polygon\), just rows \(2 rows without geometry\)$/m,
+      /^Also here {2}south \(16 Polygon\), just rows \(2 rows without geometry\)$/m,
     );
     assert.match(first.stdout, /nearkin assess \S+several\.gpkg --layer north --value /);
     const rows = await runCli("inspect", file, "--layer", "just rows");

@@ -15,6 +15,7 @@ Deno.test("planIndicator() names a value after its field and a rate after its ca
     cases: "deaths",
     population: "births",
     per: 1000,
+    share: false,
     transform: "standardized",
   });
   const named = planIndicator({ rate: "d/b", name: "mortality", per: 100_000 });
@@ -43,6 +44,12 @@ const FAULTS = [
   { when: "a side is empty", options: { rate: "a/ " }, says: /--rate a\// },
   { when: "per is not above 0", options: { rate: "a/b", per: 0 }, says: /--per 0.*above 0/ },
   { when: "per has no rate", options: { value: "a", per: 100 }, says: /--per without --rate/ },
+  { when: "the name is empty", options: { rate: "a/b", name: " " }, says: /empty --name/ },
+  {
+    when: "share has no rate",
+    options: { value: "a", share: true },
+    says: /--share without --rate/,
+  },
   {
     when: "a value is to be renamed",
     options: { value: "a", name: "b" },

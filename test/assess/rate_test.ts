@@ -79,7 +79,7 @@ async function withRegion(
     await Deno.writeTextFile(`${folder}/damp.csv`, region.table);
     await use(folder, [
       ...["assess", `${folder}/region.geojson`, "--join", `${folder}/damp.csv`, "--on", "code"],
-      ...["--rate", "damp/dwellings", "--per", "1000", "--missing-values", "*,.."],
+      ...["--rate", "damp/dwellings", "--per", "1000", "--share", "--missing-values", "*,.."],
       ...["--id", "code", "--local-permutations", "9999", "--vary", "nearest:4..6"],
       ...["--out", `${folder}/out`],
     ]);
@@ -111,6 +111,7 @@ Deno.test("nearkin assess --rate writes rates to layer, table, results and repor
       cases: "damp",
       population: "dwellings",
       per: 1000,
+      share: true,
       transform: "standardized",
     });
     const layer = await readLayer(`${folder}/out/areas.fgb`);

@@ -10,12 +10,18 @@ import { spawnSync } from "node:child_process";
 import { cpus, totalmem } from "node:os";
 import { ENGINE_SECTION } from "./engine_section.ts";
 import { HELP_SECTION } from "./help_section.ts";
+import { NEIGHBORS_SECTION } from "./neighbors_section.ts";
 import { peerPython } from "./peer_python.ts";
 import { comparisonTable, isMet, type Section } from "./section.ts";
 import { WHOLE_JOB_SECTION } from "./whole_job_section.ts";
 
 /** All sections, in the order in which they run. */
-const SECTIONS: readonly Section[] = [HELP_SECTION, ENGINE_SECTION, WHOLE_JOB_SECTION];
+const SECTIONS: readonly Section[] = [
+  HELP_SECTION,
+  ENGINE_SECTION,
+  NEIGHBORS_SECTION,
+  WHOLE_JOB_SECTION,
+];
 
 if (import.meta.main) Deno.exit(await bench(Deno.args));
 

@@ -27,7 +27,7 @@ export function benchScores(n: number): Float64Array {
 /** All areas of a map with equal weights in a row. */
 export function rankedJob(weights: Weights, permutations: number): RankedJob {
   const z = benchScores(weights.offsets.length - 1);
-  const { offsets, observed } = scaleRows(weights, Uint32Array.from(z.keys()), z);
+  const { offsets, observed } = scaleRows(weights, Uint32Array.from(z.keys()), { z });
   return rankedJobOf(z, Uint32Array.from(z, (_, i) => offsets[i + 1] - offsets[i]), {
     observed,
     permutations,
@@ -76,8 +76,9 @@ export function weighedJob(weights: Weights, permutations: number): WeighedJob {
     to: permutations,
     stopping: false,
     z,
+    term: "score",
     areas,
-    ...scaleRows(weights, areas, z),
+    ...scaleRows(weights, areas, { z }),
     atLeast: none,
     atMost: none,
   };

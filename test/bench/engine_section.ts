@@ -70,14 +70,14 @@ function localRows(folder: string): Comparison[] {
 
 function bandRows(folder: string): Comparison[] {
   const jobs = [100, 400].map((largest) => bandJob(100_000, largest, 99_999));
-  const against = againstNative(jobs[1], { folder, peer: "native_ranked", rounds: 3 });
+  const { ours, peer } = againstNative(jobs[1], { folder, peer: "native_ranked", rounds: 3 });
   const kernel = compileKernel();
   // In turns, so that a slow minute of the machine falls on both.
   const rounds = [0, 1, 2, 3].map(() => jobs.map((job) => countAll(job, kernel).seconds));
   const [few, many] = jobs.map((_, j) => median(rounds.map((round) => round[j])));
   const what = "distance band, 200 neighbor counts up to 400, 100,000 areas, P = 99,999";
   return [
-    { what, ...against, ...atMost(2) },
+    { what, ours, peer, ...atMost(2) },
     limit(
       "exponent of time from 100 to 400 neighbors at most",
       Math.log(many / few) / Math.log(4),
@@ -90,15 +90,15 @@ function weighedRows(folder: string): Comparison[] {
   const weights = unequalWeights(gridWeights(316, 316, { corners: true }), "bench");
   const job = weighedJob(weights, 9_999);
   const what = `local, unequal weights, P = 9,999, ${areas(316)}`;
-  const native = againstNative(job, { folder, peer: "native_weighed", rounds: 5 });
   const sample = 300;
-  const script = scriptMilliseconds("scripted_weighed.py", [join(folder, "job"), String(sample)]);
-  const numpy = script === null ? null : script * job.areas.length / sample / 1000;
+  const script = { name: "scripted_weighed.py", args: [String(sample)] };
+  const timed = againstNative(job, { folder, peer: "native_weighed", rounds: 5, script });
+  const numpy = timed.script === null ? null : timed.script * job.areas.length / sample;
   return [
-    { what, ...native, ...atMost(4) },
+    { what, ours: timed.ours, peer: timed.peer, ...atMost(4) },
     {
       what: `${what}, numpy (from ${sample} areas)`,
-      ours: native.ours,
+      ours: timed.ours,
       peer: numpy,
       ...fasterBy(25),
     },
@@ -107,22 +107,18 @@ function weighedRows(folder: string): Comparison[] {
 
 function globalRows(folder: string): Comparison[] {
   return [100, 316, 1000].flatMap((side) => {
-    // On a million areas fewer are timed and the rest worked out: each permutation is the same work.
-    const permutations = side === 1000 ? 96 : 992, share = 999 / permutations;
+    // Fewer are timed and the rest worked out, as each permutation is the same work: short turns, many of them.
+    const permutations = side === 100 ? 992 : 96, share = 999 / permutations;
     const job = globalJob(gridWeights(side, side, { corners: true }), permutations);
     const what = `global, P = 999, ${areas(side)}`;
-    const native = againstNative(job, {
-      folder,
-      peer: "native_shuffle",
-      rounds: side === 100 ? 9 : 5,
-    });
-    const fewer = Math.min(permutations, 96);
-    const script = scriptMilliseconds("scripted_shuffle.py", [join(folder, "job"), String(fewer)]);
-    const ours = native.ours * share, peer = native.peer === null ? null : native.peer * share;
-    const scipy = script === null ? null : script * 999 / fewer / 1000;
+    const script = { name: "scripted_shuffle.py", args: [String(permutations)] };
+    const timed = againstNative(job, { folder, peer: "native_shuffle", rounds: 7, script });
+    const [ours, native, scipy] = [timed.ours, timed.peer, timed.script].map((seconds) =>
+      seconds === null ? null : seconds * share
+    );
     return [
-      { what, ours, peer, ...atMost(1.3) },
-      { what: `${what}, scipy`, ours, peer: scipy, ...fasterBy(8) },
+      { what, ours: ours!, peer: native, ...atMost(1.3) },
+      { what: `${what}, scipy`, ours: ours!, peer: scipy, ...fasterBy(8) },
     ];
   });
 }
@@ -170,16 +166,26 @@ function limit(what: string, figure: number, most: number): Comparison {
   };
 }
 
-/** Median seconds of a job in the kernel and in the peer, in turns; both must come to the same result. */
+/** A job and what it is timed against. */
+interface Against {
+  readonly folder: string;
+  /** Native peer; its result must be ours. */
+  readonly peer: string;
+  /** Script peer, with what it is told besides the job. */
+  readonly script?: { readonly name: string; readonly args: readonly string[] };
+  readonly rounds: number;
+}
+
+/** Median seconds of a job in the kernel and in its peers, in turns; null for peers that are not installed. */
 function againstNative(
   job: Job,
-  { folder, peer, rounds }: { folder: string; peer: string; rounds: number },
-): { ours: number; peer: number | null } {
+  { folder, peer, script, rounds }: Against,
+): { ours: number; peer: number | null; script: number | null } {
   const path = join(folder, "job");
   writeJob(path, job);
-  const program = compilePeer(peer, folder);
-  const kernel = compileKernel();
-  const ours: number[] = [], theirs: number[] = [];
+  const program = compilePeer(peer, folder), kernel = compileKernel();
+  const python = script === undefined ? null : peerPython();
+  const ours: number[] = [], theirs: number[] = [], scripted: number[] = [];
   for (let round = 0; round <= rounds; round++) {
     const { seconds, words } = countAll(job, kernel);
     const native = program === null ? null : runPeer(program, [path, "1"]);
@@ -191,8 +197,12 @@ function againstNative(
     if (round === 0) continue; // the kernel's first calls run before it is optimized
     ours.push(seconds);
     if (native !== null) theirs.push(native.milliseconds / 1000);
+    if (script === undefined || python === null) continue;
+    const { milliseconds } = runPeer(python, [join(PEERS, script.name), path, ...script.args]);
+    scripted.push(milliseconds / 1000);
   }
-  return { ours: median(ours), peer: program === null ? null : median(theirs) };
+  const medianOrNull = (seconds: readonly number[]) => seconds.length ? median(seconds) : null;
+  return { ours: median(ours), peer: medianOrNull(theirs), script: medianOrNull(scripted) };
 }
 
 /**
@@ -220,11 +230,6 @@ function wordsOf(part: PartOf<Job>): string {
     });
   }
   return `checksum ${sum}`;
-}
-
-function scriptMilliseconds(script: string, args: readonly string[]): number | null {
-  const python = peerPython();
-  return python === null ? null : runPeer(python, [join(PEERS, script), ...args]).milliseconds;
 }
 
 function areas(side: number): string {

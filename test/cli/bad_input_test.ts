@@ -73,7 +73,13 @@ const FAULTS: readonly Fault[] = [
     when: "fewer than three areas can be used",
     args: [...LAYER, "--value", "sparse", ...OUT],
     code: 4,
-    says: /sparse.*grid\.geojson.*2 of its 9 areas.*at least 3/,
+    says: /sparse.*grid\.geojson.*2 of its 9 areas.*left out: 7 value missing.*at least 3/,
+  },
+  {
+    when: "--value-where selects no area",
+    args: [...LAYER, "--value", "rate", "--value-where", "rate > 100", ...OUT],
+    code: 4,
+    says: /rate.*grid\.geojson.*"rate > 100" selects none of the 9 areas.*wider/,
   },
   {
     when: "a distance rule meets a layer without CRS",
@@ -88,7 +94,7 @@ const FAULTS: readonly Fault[] = [
     when: "the CRS is unknown",
     args: [...LAYER, "--value", "rate", "--metric", "EPSG:999999", ...OUT],
     code: 2,
-    says: /EPSG:999999/,
+    says: /No coordinate reference system "EPSG:999999".*EPSG:4326/,
   },
   {
     when: "nearest asks for as many areas as there are",
@@ -100,7 +106,7 @@ const FAULTS: readonly Fault[] = [
     when: "a band has no width",
     args: [...LAYER, "--value", "rate", "--neighbors", "within:0km", ...OUT],
     code: 2,
-    says: /0/,
+    says: /"0km".*more than 0/,
   },
   {
     when: "a rule is misspelled",
@@ -215,6 +221,12 @@ const FAULTS: readonly Fault[] = [
     args: [...LAYER, "--rate", "rate/below", ...OUT],
     code: 4,
     says: /below.*row 1 .*-1.*0 or more/,
+  },
+  {
+    when: "a share has more cases than population",
+    args: [...LAYER, "--rate", "people/rate", "--share", ...OUT],
+    code: 4,
+    says: /row 1 .*100 cases \(people\) in a population of 0 \(rate\)/,
   },
   {
     when: "all populations are zero",

@@ -70,3 +70,11 @@ Deno.test("assess ends with 130 and leaves nothing behind when it is interrupted
     assert.equal(stderr, "nearkin: interrupted, nothing was written\n");
     assert.deepEqual(Array.from(Deno.readDirSync(folder), ({ name }) => name), ["grid.geojson"]);
   }));
+
+Deno.test("assess counts in the summary every definition tried, also those that turned out the same", () =>
+  onGrid(async (args) => {
+    const swept = [...args.filter((arg) => arg !== "--no-sweep"), "--vary", "nearest:4, touching"];
+    const { stdout } = await runCli(...swept, "--neighbors", "touching upto=1 + edge");
+    assert.match(stdout, /^Over the 3 definitions tried/m);
+    assert.match(stdout, /^Sweep +3 definitions/m);
+  }));

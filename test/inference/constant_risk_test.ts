@@ -54,6 +54,25 @@ for (const total of [3, 60, 400]) {
   });
 }
 
+// Whole populations whose 3 areas hold 4, 6 and 5 persons: C(4, k) C(11, 12 - k) / C(15, 12), likewise for the others.
+Deno.test("constantRiskMaps() counts nobody twice when the rate is a share", () => {
+  const population = Float64Array.of(4, 6, 5);
+  const counts = { cases: Float64Array.of(4, 6, 2), population, share: true };
+  const maps = constantRiskMaps(counts, streamsOf(4000));
+  const limit = 1.95 / Math.sqrt(maps.length);
+  const choose = (n: number, k: number): number =>
+    k < 0 || k > n ? 0 : k === 0 ? 1 : choose(n - 1, k - 1) * n / k;
+  population.forEach((size, i) => {
+    const probabilities = Array.from(
+      { length: size + 1 },
+      (_, k) => choose(size, k) * choose(15 - size, 12 - k) / choose(15, 12),
+    );
+    assert.ok(maps.every((map) => map[i] <= size));
+    assert.ok(distance(maps.map((map) => map[i]), probabilities) < limit, `area ${i}`);
+  });
+  assert.ok(maps.every((map) => map[0] + map[1] + map[2] === 12));
+});
+
 Deno.test("constantRiskMaps() gives a map the same counts whichever maps are drawn with it", () => {
   const counts = { cases: Float64Array.of(30, 9, 1), population: Float64Array.of(10, 20, 30) };
   const together = constantRiskMaps(counts, streamsOf(5));

@@ -2,8 +2,10 @@ import assert from "node:assert/strict";
 import { gather } from "../../lib/inference/gather.ts";
 import type { Counter } from "../../lib/inference/job.ts";
 import { compileKernel } from "../../lib/inference/load_kernel.ts";
+import { scaleRows } from "../../lib/inference/local_rows.ts";
 import { orderAreas } from "../../lib/inference/order_areas.ts";
 import { pairLinks, quadraticForm } from "../../lib/inference/pair_links.ts";
+import type { PairTerm } from "../../lib/inference/pair_term.ts";
 import {
   openRankedCounter,
   type RankedJob,
@@ -101,19 +103,17 @@ for (const [kind, values] of Object.entries(awkwardValues(400))) {
     );
   });
 
-  Deno.test(`openWeighedKernel() counts what plain TypeScript counts when values are ${kind}`, () => {
-    for (const stopping of [false, true]) {
-      const job = weighedJob(
-        values,
-        unequalWeights(gridWeights(20, 20, { corners: true }), "twins"),
-        stopping,
-      );
-      const { units } = weighedWorkload(job);
-      const plain = finish(openWeighedCounter(job), units);
-      assert.deepEqual(finish(openWeighedKernel(job, kernel), units), plain);
-      if (stopping) assert.ok(plain[0].stopped.includes(1));
-    }
-  });
+  for (const term of ["score", "squaredDifference"] as const) {
+    Deno.test(`openWeighedKernel() counts what plain TypeScript counts of each ${term} when values are ${kind}`, () => {
+      for (const stopping of [false, true]) {
+        const job = weighedJob(values, term, stopping);
+        const { units } = weighedWorkload(job);
+        const plain = finish(openWeighedCounter(job), units);
+        assert.deepEqual(finish(openWeighedKernel(job, kernel), units), plain);
+        if (stopping) assert.ok(plain[0].stopped.includes(1));
+      }
+    });
+  }
 
   Deno.test(`openShuffleKernel() sums what plain TypeScript sums when values are ${kind}`, () => {
     const job = globalJob(values, 75);
@@ -131,10 +131,10 @@ for (const [kind, values] of Object.entries(awkwardValues(400))) {
   });
 }
 
-function weighedJob(values: Float64Array, weights: Weights, stopping: boolean): WeighedJob {
+function weighedJob(values: Float64Array, term: PairTerm, stopping: boolean): WeighedJob {
   const { z } = standardize(values);
-  const largest = weights.values.reduce((most, weight) => Math.max(most, weight), 0);
-  const scaled = { ...weights, values: weights.values.map((weight) => weight / largest) };
+  const weights = unequalWeights(gridWeights(20, 20, { corners: true }), "twins");
+  const areas = Uint32Array.from(z.keys());
   return {
     kind: "weighed",
     seed: seedFromText("twins"),
@@ -142,10 +142,9 @@ function weighedJob(values: Float64Array, weights: Weights, stopping: boolean): 
     to: stopping ? 8_000 : 3_000,
     stopping,
     z,
-    areas: Uint32Array.from(z, (_, i) => i),
-    offsets: scaled.offsets,
-    weights: scaled.values,
-    observed: spatialLag(scaled, z),
+    term,
+    areas,
+    ...scaleRows(weights, areas, { z, term }),
     atLeast: new Uint32Array(z.length).fill(stopping ? 3 : 0),
     atMost: new Uint32Array(z.length).fill(stopping ? 20 : 0),
   };
@@ -159,10 +158,29 @@ function globalJob(values: Float64Array, permutations: number): ShuffleJob {
     z,
     seed: seedFromText("twins"),
     permutations,
-    definitions: definitions.map(pairLinks),
+    definitions: definitions.map((weights) => pairLinks(weights)),
     totals: definitions.map((weights) => weightSums(weights).s0),
   });
 }
+
+Deno.test("openShuffleKernel() sums what plain TypeScript sums when some areas lie in other places", () => {
+  const grid = gridWeights(20, 20, { corners: true });
+  const places = Uint32Array.from({ length: 400 }, (_, i) => 7 * i % 400);
+  const { z } = standardize(normalNumbers(400, "moved"));
+  const job = shuffleJob({
+    z,
+    seed: seedFromText("moved"),
+    permutations: 75,
+    definitions: [pairLinks(grid), pairLinks(grid, places)],
+    totals: [weightSums(grid).s0, weightSums(grid).s0],
+  });
+  const { units } = shuffleWorkload(job);
+  const singles = finish(openShuffleSingles(job), units);
+  assert.deepEqual(finish(openShuffleKernel(job, kernel), units), singles);
+  for (const { sums: [still, moved] } of singles) {
+    still.forEach((sum, p) => assert.ok(Math.abs(sum - moved[p]) < 1e-3 * Math.sqrt(400)));
+  }
+});
 
 Deno.test("openShuffleKernel() computes sums near the observed one again in double precision", () => {
   const job = globalJob(normalNumbers(400, "doubt"), 32);

@@ -104,3 +104,16 @@ Deno.test("intervalOfP() doubles the interval of the rarer tail and is null wher
   assert.equal(intervalOfP({ ...counts, enumerated: true }), null);
   assert.equal(intervalOfP({ ...counts, permutations: 0 }), null);
 });
+
+// Source: scipy 1.17.1, scipy.stats.beta.ppf; scipy.stats.nbinom gives the tails 0.005 at both ends.
+Deno.test("intervalOfP() is that of waiting for the last hit when drawing stopped at it", () => {
+  const [low, high] = intervalOfP({
+    atLeast: 25,
+    atMost: 19_990,
+    permutations: 20_000,
+    enumerated: false,
+    stopped: true,
+  })!;
+  assertClose(low, 2 * 0.0006999438300067642, 1e-10);
+  assertClose(high, 2 * 0.001986566500823207, 1e-10);
+});

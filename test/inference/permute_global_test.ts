@@ -174,10 +174,10 @@ Deno.test("permuteMoran() refuses numbers of permutations that are too small, to
 Deno.test("permuteMoran() refuses data without an answer", async () => {
   const weights = gridWeights(3, 3);
   await assert.rejects(permuteMoran(new Float64Array(9).fill(2), [weights]), UnfitDataError);
-  await assert.rejects(
-    permuteMoran(Float64Array.of(1, 2, NaN, 4, 5, 6, 7, 8, 9), [weights]),
-    UnfitDataError,
-  );
+  for (const value of [NaN, Infinity]) {
+    const values = Float64Array.of(1, 2, value, 4, 5, 6, 7, 8, 9);
+    await assert.rejects(permuteMoran(values, [weights]), UnfitDataError);
+  }
   await assert.rejects(permuteMoran(Float64Array.of(1, 2), [chainWeights(2)]), /at least 3/);
   await assert.rejects(permuteMoran(normalNumbers(8, "length"), [weights]), RangeError);
   const negative = { ...weights, values: weights.values.map((value) => -value) };
@@ -185,6 +185,12 @@ Deno.test("permuteMoran() refuses data without an answer", async () => {
     permuteMoran(normalNumbers(9, "negative"), [weights, negative]),
     /sum to -24/,
   );
+  const nothing = { ...weights, values: new Float64Array(weights.values.length) };
+  await assert.rejects(permuteMoran(normalNumbers(9, "none"), [nothing]), /no area has a neighbor/);
+  for (const weight of [NaN, Infinity]) {
+    const odd = { ...weights, values: weights.values.with(3, weight) };
+    await assert.rejects(permuteMoran(normalNumbers(9, "odd"), [odd]), /sum to (NaN|Infinity)/);
+  }
 });
 
 Deno.test("permuteMoran() rejects with the signal's reason when aborted on the way, and reports progress", async () => {

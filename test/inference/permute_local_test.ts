@@ -196,14 +196,54 @@ Deno.test("permuteLocalMoran() has a uniform one-sided p under the null for one 
   }
 });
 
-Deno.test("permuteLocalMoran() refuses permutations below 99 and data without an answer", async () => {
+Deno.test("permuteLocalMoran() refuses numbers of permutations and of workers that nobody can draw", async () => {
+  const values = Float64Array.of(1, 2, 3, 5), weights = chainWeights(4);
+  for (const permutations of [0, -1, 98, 99.5, 10_000_000, NaN, Infinity]) {
+    await assert.rejects(permuteLocalMoran(values, weights, { permutations }), (error) => {
+      return error instanceof UsageError && error.message.includes(`${permutations} permutations`);
+    });
+  }
+  for (const workers of [0, 1.5, NaN]) {
+    await assert.rejects(permuteLocalMoran(values, weights, { workers }), UsageError);
+  }
+});
+
+Deno.test("permuteLocalMoran() refuses values without an answer", async () => {
   const weights = chainWeights(4);
-  const values = Float64Array.of(1, 2, 3, 5);
-  await assert.rejects(permuteLocalMoran(values, weights, { permutations: 98 }), UsageError);
-  await assert.rejects(permuteLocalMoran(values, weights, { workers: 0 }), UsageError);
   await assert.rejects(permuteLocalMoran(Float64Array.of(2, 2, 2, 2), weights), UnfitDataError);
-  await assert.rejects(permuteLocalMoran(Float64Array.of(1, 2, NaN, 2), weights), UnfitDataError);
+  for (const value of [NaN, Infinity, -Infinity]) {
+    await assert.rejects(permuteLocalMoran(Float64Array.of(1, 2, value, 4), weights), (error) => {
+      return error instanceof UnfitDataError && error.message.includes(`area 2 is ${value}`);
+    });
+  }
+  await assert.rejects(permuteLocalMoran(Float64Array.of(1, 2), chainWeights(2)), /at least 3/);
   await assert.rejects(permuteLocalMoran(Float64Array.of(1, 2, 3), weights), RangeError);
+});
+
+Deno.test("permuteLocalMoran() refuses more neighbors than there are other areas and weights that are not finite", async () => {
+  const values = Float64Array.of(1, 2, 3, 5), chain = chainWeights(4);
+  const crowded = {
+    offsets: Uint32Array.of(0, 4, 5, 6, 7),
+    indices: Uint32Array.of(1, 2, 3, 3, 0, 0, 0),
+    values: new Float64Array(7).fill(1),
+    equalInRows: true,
+  };
+  await assert.rejects(
+    permuteLocalMoran(values, crowded),
+    /4 different neighbors for area 0 as there are only 3/,
+  );
+  for (const weight of [NaN, Infinity]) {
+    const odd = { ...chain, values: chain.values.with(2, weight) };
+    await assert.rejects(permuteLocalMoran(values, odd), new RegExp(`weight 2 is ${weight}`));
+  }
+});
+
+Deno.test("permuteLocalMoran() takes an area whose weights are all 0 for one that is alone", async () => {
+  const chain = chainWeights(4), values = Float64Array.of(1, 2, 3, 5);
+  const found = await permuteLocalMoran(values, { ...chain, values: chain.values.with(0, 0) });
+  assert.equal(found.permutations[0], 0);
+  assert.ok(Number.isNaN(twoSidedP(countsOf(found, 0))));
+  assert.ok(found.permutations[1] > 0);
 });
 
 Deno.test("permuteLocalMoran() rejects when its signal is aborted already", async () => {

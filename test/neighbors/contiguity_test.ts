@@ -305,3 +305,11 @@ Deno.test("contiguityFinder() finds 313 borders between the countries of the wor
   assert.deepEqual(names.filter((_, i) => rows[i].length === 0).sort(), expected.no_neighbours);
   assert.equal(report.overlapPairs, 0);
 });
+
+Deno.test("contiguityFinder() sees no poles in coordinates that cannot be degrees", () => {
+  // Kilometers in a file whose format knows only degrees: beyond 90 "north" there is no pole where all meet.
+  const layer = [box(0, 80, 10, 90), box(100, 100, 110, 110), box(200, 100, 210, 110)];
+  assert.deepEqual(rowsOf(asDrawn(layer, true).touching), [[], [], []]);
+  const degrees = [box(0, 80, 10, 90), box(100, 80, 110, 90), box(20, 50, 30, 60)];
+  assert.deepEqual(rowsOf(asDrawn(degrees, true).touching), [[1], [0], []]);
+});

@@ -1,5 +1,6 @@
 import assert from "node:assert/strict";
 import { findComponents } from "../../lib/neighbors/components.ts";
+import { planeSpace } from "../../lib/neighbors/plane_space.ts";
 import { describeTopology } from "../../lib/neighbors/describe.ts";
 import { randomTopology, rowsOf, topologyOfRows } from "../support/links.ts";
 
@@ -17,6 +18,8 @@ Deno.test("describeTopology() counts pairs, one-way links, islands, components a
     maxNeighbors: 2,
     oneWayLinks: 1,
     longestLink: null,
+    // 3 of the 4 x 3 links there could be.
+    density: 0.25,
     neighborCounts: [
       { neighbors: 0, areas: 2 },
       { neighbors: 1, areas: 1 },
@@ -26,10 +29,10 @@ Deno.test("describeTopology() counts pairs, one-way links, islands, components a
 });
 
 Deno.test("describeTopology() measures the longest link, and ignores links without a distance", () => {
-  const points = Float64Array.from([0, 0, 3, 4, 3, 0, NaN, NaN]);
+  const { distance } = planeSpace(Float64Array.from([0, 0, 3, 4, 3, 0, NaN, NaN]));
   const links = topologyOfRows([[1], [0, 2], [1, 3], []]);
-  assert.equal(describeTopology(links, { points }).longestLink, 5);
-  assert.equal(describeTopology(topologyOfRows([[], []]), { points }).longestLink, null);
+  assert.equal(describeTopology(links, { distance }).longestLink, 5);
+  assert.equal(describeTopology(topologyOfRows([[], []]), { distance }).longestLink, null);
 });
 
 Deno.test("describeTopology() of no areas is all zeros", () => {

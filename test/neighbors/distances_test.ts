@@ -4,12 +4,16 @@ import {
   kNearestDistances,
   linkDistances,
 } from "../../lib/neighbors/distances.ts";
+import { planeSpace } from "../../lib/neighbors/plane_space.ts";
 import { numberColumn, referenceCase } from "../support/reference.ts";
 import { randomPoints, topologyOfRows } from "../support/links.ts";
 
 Deno.test("linkDistances() measures every link and leaves NaN where an end has no place", () => {
   const topology = topologyOfRows([[1, 2], [0], []]);
-  const lengths = linkDistances(topology, Float64Array.from([0, 0, 3, 4, NaN, NaN]));
+  const lengths = linkDistances(
+    topology,
+    planeSpace(Float64Array.from([0, 0, 3, 4, NaN, NaN])).distance,
+  );
   assert.deepEqual(lengths, Float64Array.from([5, NaN, 5]));
 });
 

@@ -217,6 +217,7 @@ Deno.test("ruleNeeds() collects points, boundaries, fields and files", () => {
   assert.deepEqual(ruleNeeds(parseRule("touching upto=2")), {
     points: false,
     boundaries: true,
+    snap: null,
     fields: [],
     linkFiles: [],
   });
@@ -225,9 +226,11 @@ Deno.test("ruleNeeds() collects points, boundaries, fields and files", () => {
     {
       points: true,
       boundaries: false,
+      snap: null,
       fields: ["A", "B"],
       linkFiles: ["f.csv"],
     },
   );
   assert.equal(ruleNeeds(parseRule("edge + gabriel")).points, true);
+  assert.equal(ruleNeeds(parseRule("touching snap=1m + edge snap=2m")).snap?.meters, 2);
 });

@@ -1,10 +1,9 @@
 import assert from "node:assert/strict";
+import { binomialTable, type CountTable, poissonTable } from "../../lib/prepare/count_table.ts";
 import { funnelLimits, funnelWords } from "../../lib/prepare/funnel.ts";
-import { poissonQuantiles, poissonTable } from "../../lib/prepare/poisson_quantiles.ts";
-import { assertClose } from "../support/close.ts";
 
 /** Quantiles at 0.001, 0.025, 0.975 and 0.999. Source: scipy 1.17.1, scipy.stats.poisson.ppf. */
-const QUANTILES: readonly (readonly [mean: number, quantiles: readonly number[]])[] = [
+const POISSON: readonly (readonly [mean: number, quantiles: readonly number[]])[] = [
   [0.3, [0, 0, 2, 3]],
   [1, [0, 0, 3, 5]],
   [4.7, [0, 1, 9, 13]],
@@ -14,23 +13,36 @@ const QUANTILES: readonly (readonly [mean: number, quantiles: readonly number[]]
   [1e6, [996911, 998041, 1001960, 1003092]],
 ];
 
-for (const [mean, quantiles] of QUANTILES) {
-  Deno.test(`funnelLimits() are exact when ${mean} cases are expected`, () => {
-    const { low998, low95, high95, high998 } = funnelLimits(mean);
-    assert.deepEqual([low998, low95, high95, high998], quantiles);
-  });
+/** The same of a binomial distribution. Source: scipy 1.17.1, scipy.stats.binom.ppf. */
+const BINOMIAL: readonly (readonly [n: number, p: number, quantiles: readonly number[]])[] = [
+  [3, 0.01, [0, 0, 1, 1]],
+  [10, 0.5, [1, 2, 8, 9]],
+  [40, 0.9, [29, 32, 39, 40]],
+  [250, 0.08, [8, 12, 29, 34]],
+  [5000, 0.3, [1400, 1437, 1564, 1601]],
+  [1e6, 0.6, [598486, 599040, 600960, 601514]],
+];
+
+function limitsOf(table: CountTable): number[] {
+  const { low998, low95, high95, high998 } = funnelLimits(table);
+  return [low998, low95, high95, high998];
 }
 
-Deno.test("poissonQuantiles() is 0 when nothing is expected", () => {
-  assert.deepEqual(poissonQuantiles(0, [0.001, 0.999]), [0, 0]);
-});
+for (const [mean, quantiles] of POISSON) {
+  Deno.test(`funnelLimits() are exact when ${mean} cases are expected`, () =>
+    assert.deepEqual(limitsOf(poissonTable(mean)), quantiles));
+}
 
-Deno.test("poissonTable() has the probabilities e^-mean mean^k / k!", () => {
-  const { first, terms, total } = poissonTable(2.5);
-  assert.equal(first, 0);
-  for (let k = 0, factorial = 1; k < 12; factorial *= ++k) {
-    assertClose(terms[k] / total, Math.exp(-2.5) * 2.5 ** k / factorial, 1e-13, `P(X = ${k})`);
-  }
+for (const [n, p, quantiles] of BINOMIAL) {
+  Deno.test(`funnelLimits() are exact when ${n} each are a case with probability ${p}`, () =>
+    assert.deepEqual(limitsOf(binomialTable(n, p)), quantiles));
+}
+
+Deno.test("funnelWords() takes binomial limits for a share", () => {
+  // At an overall share of 0.9 the limits of 40 are 29, 32, 39, 40; Poisson ones of 36 would be wider.
+  const shares = { cases: Float64Array.of(31, 8969), population: Float64Array.of(40, 9960) };
+  assert.equal(funnelWords({ ...shares, share: true })[0], "below 95");
+  assert.equal(funnelWords(shares)[0], "inside");
 });
 
 Deno.test("funnelWords() calls a count on a limit inside and the next one outside", () => {

@@ -53,3 +53,16 @@ for (const { when, cases, population, says } of FAULTS) {
     );
   });
 }
+
+Deno.test("checkCounts() takes more cases than population but for a share", () => {
+  const deaths = field("deaths", "1", "12"), people = field("people", "10", "10");
+  assert.deepEqual(checkCounts(deaths, people).reasons, [null, null]);
+  assert.throws(
+    () => checkCounts(deaths, people, { share: true }),
+    /share as row 2 \(_row 1\) has 12 cases \(deaths\) in a population of 10 \(people\); leave out --share/,
+  );
+  assert.throws(
+    () => checkCounts(deaths, field("people", "10.5", "99"), { share: true }),
+    /10\.5.*whole/,
+  );
+});

@@ -11,7 +11,7 @@ const nameOf = (at: number) => `row ${at}`;
 
 Deno.test("transformValues() gives each transform's numbers with 13 digits", () => {
   const of = (transform: Transform, ...values: number[]) => [
-    ...transformValues(Float64Array.from(values), transform, nameOf),
+    ...transformValues(Float64Array.from(values), transform, { nameOf }),
   ];
   assert.deepEqual(of("none", 0.1 + 0.2), [0.1 + 0.2]);
   // Logarithms from tables: ln 2 = 0.69314718055994…, ln 10 = 2.30258509299404…
@@ -25,7 +25,7 @@ const UNDEFINED = [["log", 0], ["log", -1], ["log1p", -1], ["sqrt", -0.5]] as co
 for (const [transform, value] of UNDEFINED) {
   Deno.test(`transformValues() names the row when ${transform} of ${value} is asked`, () => {
     assert.throws(
-      () => transformValues(Float64Array.of(1, value), transform, nameOf),
+      () => transformValues(Float64Array.of(1, value), transform, { nameOf }),
       (error: Error) =>
         error instanceof UnfitDataError && error.message.includes(`row 1 holds ${value}`) &&
         error.message.includes(`--transform ${transform}`),

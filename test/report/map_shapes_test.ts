@@ -29,6 +29,7 @@ function frameOf(
     height: 100,
     across: Math.round,
     down: Math.round,
+    turn: 0,
     metersPerUnit: null,
   };
 }

@@ -64,7 +64,7 @@ Deno.test("the report in a browser", async (test) => {
       visit(browser, sample, async (page) => {
         assert.ok(await page.getByRole("heading", { level: 1 }).isVisible());
         assert.equal(await page.locator("h1").innerText(), sample.results.verdict.headline);
-        assert.equal(await page.locator("figure svg").count(), 5);
+        assert.equal(await page.locator("figure svg").count(), 6);
       }));
 
     await test.step("it fits a desk, a phone and paper", () =>

@@ -27,6 +27,7 @@ const RATE: NonNullable<Run["rate"]> = {
   cases: "damp <1>",
   population: "homes",
   per: 1000,
+  share: false,
   totalCases: 1,
   totalPopulation: 12_345.5,
   overall: 50,

@@ -8,6 +8,7 @@ import { bell, stream } from "../../lib/demo/chance.ts";
 import { noiseField } from "../../lib/demo/noise_field.ts";
 import { adjustP } from "../../lib/inference/adjust.ts";
 import type { Topology } from "../../lib/neighbors/topology.ts";
+import { representativePoints } from "../../lib/project/points.ts";
 import { localMoran } from "../../lib/statistics/local_moran.ts";
 import { moranI } from "../../lib/statistics/moran.ts";
 import { CAUTIONS } from "../../lib/sweep/cautions.ts";
@@ -52,6 +53,7 @@ export function reportSample(options: HexOptions = ISLANDS): ReportInput {
   const used = Uint32Array.from([...leftOut.keys()].filter((row) => leftOut[row] === null));
   const weights = restrict(weigh(topology), used);
   const areas = testedAreas(values, leftOut, { used, weights });
+  const links = linksOf(weights).map(([from, to]) => [used[from], used[to]]);
   return {
     results: sampleResults(areas, {
       moran: moranI(Float64Array.from(used, (row) => values[row]), weights),
@@ -60,10 +62,20 @@ export function reportSample(options: HexOptions = ISLANDS): ReportInput {
     areas,
     geometry,
     crs: UTM,
+    links: {
+      from: Uint32Array.from(links, ([from]) => from),
+      to: Uint32Array.from(links, ([, to]) => to),
+      places: representativePoints(geometry),
+    },
     s0: weightSums(weights).s0,
     labels: places.map((_, row) => `Area ${String(17 + 3 * row).padStart(4, "0")}`),
     cautions: CAUTIONS,
   };
+}
+
+/** Both ends of each link. */
+function linksOf({ offsets, indices }: Weights): [number, number][] {
+  return Array.from(indices, (to, link) => [offsets.findIndex((end) => end > link) - 1, to]);
 }
 
 /** The same findings with other results. */

@@ -97,6 +97,20 @@ function runOf(areas: AreaResults, { moran, weights, counts, significant }: Part
   return {
     indicator: "damp_rate",
     neighbors: neighborsOf(weights),
+    diagnostics: {
+      sharingPlaces: 0,
+      noneAlone: 4212.6,
+      oneComponent: 9120.4,
+      boundaries: {
+        nearVertexPairs: 0,
+        junctionPairs: 3,
+        overlapPairs: 0,
+        snappedPairs: 0,
+        nearMisses: 2,
+        widestGap: 1.25,
+      },
+      selfCrossing: 0,
+    },
     weights: "equal",
     standardize: "row" as const,
     values: {
@@ -171,6 +185,7 @@ function neighborsOf({ offsets, indices }: Weights) {
     maxNeighbors: Math.max(...byDegree.keys()),
     oneWayLinks: 0,
     longestLink: 3148.2,
+    density: indices.length / (degrees.length * (degrees.length - 1)),
     neighborCounts: [...byDegree].sort(([a], [b]) => a - b)
       .map(([neighbors, areas]) => ({ neighbors, areas })),
   };

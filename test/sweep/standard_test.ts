@@ -1,4 +1,7 @@
 import assert from "node:assert/strict";
+import { WGS84 } from "../../lib/project/ellipsoid.ts";
+import { earthSpace } from "../../lib/neighbors/earth_space.ts";
+import { planeSpace } from "../../lib/neighbors/plane_space.ts";
 import { neighborBuilder } from "../../lib/neighbors/build.ts";
 import { ruleText } from "../../lib/neighbors/rule.ts";
 import { planSweep } from "../../lib/sweep/plan.ts";
@@ -33,7 +36,7 @@ function slowMedian(points: Float64Array, k: number): number {
 
 Deno.test("standardDefinitions() of polygons are three contiguities, six nearest, five bands and more", () => {
   const points = randomPoints(40);
-  const sweep = standardDefinitions({ shape: "polygon", points, count: 40 });
+  const sweep = standardDefinitions({ shape: "polygon", space: planeSpace(points), count: 40 });
   const texts = textsOf(sweep);
   assert.deepEqual(texts.filter((text) => !text.includes("within")), [
     "touching equal",
@@ -50,7 +53,7 @@ Deno.test("standardDefinitions() of polygons are three contiguities, six nearest
 
 Deno.test("standardDefinitions() of points have no contiguity but two more graphs", () => {
   const texts = textsOf(
-    standardDefinitions({ shape: "point", points: randomPoints(40), count: 40 }),
+    standardDefinitions({ shape: "point", space: planeSpace(randomPoints(40)), count: 40 }),
   );
   assert.ok(!texts.some((text) => /touching|edge/.test(text)));
   assert.ok(["relative equal", "sphere equal"].every((text) => texts.includes(text)));
@@ -59,7 +62,11 @@ Deno.test("standardDefinitions() of points have no contiguity but two more graph
 Deno.test("standardDefinitions() reach as far as the median distances, rounded up", () => {
   for (const count of [40, 41]) {
     const points = randomPoints(count);
-    const { definitions } = standardDefinitions({ shape: "point", points, count });
+    const { definitions } = standardDefinitions({
+      shape: "point",
+      space: planeSpace(points),
+      count,
+    });
     const bands = definitions.flatMap(({ rule, weights }) =>
       rule.kind === "within" && weights === "equal" ? [rule.distance.meters] : []
     );
@@ -85,7 +92,11 @@ Deno.test("standardDefinitions() give the whole lengths of a regular grid, share
     { length: 162 },
     (_, at) => 1000 * (at % 2 === 0 ? (at >> 1) % 9 : Math.floor((at >> 1) / 9)),
   );
-  const { definitions } = standardDefinitions({ shape: "point", points, count: 81 });
+  const { definitions } = standardDefinitions({
+    shape: "point",
+    space: planeSpace(points),
+    count: 81,
+  });
   const plan = planSweep({ main: definitions[0], vary: null, standard: definitions });
   const bands = plan.definitions.filter(({ family }) => family === "band").map((one) =>
     one.ruleText
@@ -95,27 +106,32 @@ Deno.test("standardDefinitions() give the whole lengths of a regular grid, share
 });
 
 Deno.test("standardDefinitions() leave out what few areas do not allow, and say so", () => {
-  const nine = standardDefinitions({ shape: "polygon", points: randomPoints(9), count: 9 });
+  const nine = standardDefinitions({
+    shape: "polygon",
+    space: planeSpace(randomPoints(9)),
+    count: 9,
+  });
   const texts = textsOf(nine);
   assert.ok(texts.includes("nearest:8 equal") && !texts.some((text) => /nearest:1/.test(text)));
   assert.equal(texts.filter((text) => text.includes("within")).length, 3);
   assert.deepEqual(nine.notes, [
     "With 9 areas no definition by the 10th nearest area or beyond could be tried",
   ]);
-  const two = standardDefinitions({ shape: "point", points: randomPoints(2), count: 2 });
+  const two = standardDefinitions({ shape: "point", space: planeSpace(randomPoints(2)), count: 2 });
   assert.deepEqual(two.definitions, []);
   assert.equal(
-    standardDefinitions({ shape: "point", points: new Float64Array(0), count: 0 }).notes.length,
+    standardDefinitions({ shape: "point", space: planeSpace(new Float64Array(0)), count: 0 }).notes
+      .length,
     1,
   );
 });
 
 Deno.test("standardDefinitions() without distances are the contiguities", () => {
-  const sweep = standardDefinitions({ shape: "polygon", points: null, count: 100 });
+  const sweep = standardDefinitions({ shape: "polygon", space: null, count: 100 });
   assert.deepEqual(textsOf(sweep), ["touching equal", "edge equal", "touching upto=2 equal"]);
   assert.match(sweep.notes[0], /Without a CRS or a planar metric/);
   assert.deepEqual(
-    standardDefinitions({ shape: "point", points: null, count: 100 }).definitions,
+    standardDefinitions({ shape: "point", space: null, count: 100 }).definitions,
     [],
   );
 });
@@ -124,7 +140,7 @@ Deno.test("standardDefinitions() do not use lengths of 0 nor inverse distances o
   // Twenty places with six areas each: the five nearest others are at the same place.
   const places = randomPoints(20);
   const points = Float64Array.from({ length: 240 }, (_, at) => places[at % 40]);
-  const sweep = standardDefinitions({ shape: "point", points, count: 120 });
+  const sweep = standardDefinitions({ shape: "point", space: planeSpace(points), count: 120 });
   const texts = textsOf(sweep);
   assert.ok(!texts.some((text) => text.includes("inverse")));
   assert.equal(texts.filter((text) => /^within.* equal$/.test(text)).length, 4);
@@ -134,7 +150,7 @@ Deno.test("standardDefinitions() do not use lengths of 0 nor inverse distances o
 
 Deno.test("standardDefinitions() leave areas without a place out of all distances", () => {
   const points = Float64Array.of(...randomPoints(10), NaN, NaN);
-  const sweep = standardDefinitions({ shape: "point", points, count: 11 });
+  const sweep = standardDefinitions({ shape: "point", space: planeSpace(points), count: 11 });
   assert.ok(!textsOf(sweep).some((text) => text.startsWith("nearest:10")));
   assert.equal(sweep.notes[0], "1 of 11 areas have no place and no neighbor by distance");
   assert.ok(textsOf(sweep).every((text) => !text.includes("NaN")));
@@ -142,7 +158,7 @@ Deno.test("standardDefinitions() leave areas without a place out of all distance
 
 Deno.test("every standard definition can be built and weighed", () => {
   const count = 60, points = randomPoints(count);
-  const { definitions } = standardDefinitions({ shape: "point", points, count });
+  const { definitions } = standardDefinitions({ shape: "point", space: planeSpace(points), count });
   const build = neighborBuilder({
     geometry: null,
     points,
@@ -154,4 +170,15 @@ Deno.test("every standard definition can be built and weighed", () => {
     assert.equal(weighed.offsets.length, count + 1, ruleText(rule));
     assert.ok(weighed.indices.length > 0, ruleText(rule));
   }
+});
+
+Deno.test("standardDefinitions() on the ellipsoid have bands in meters but no graphs, and say so", () => {
+  // A thousandth of a degree is about 111 m, so the bands are hundreds of meters wide.
+  const degrees = randomPoints(40).map((u) => u / 1e6);
+  const space = earthSpace(degrees, WGS84);
+  const { definitions, notes } = standardDefinitions({ shape: "point", space, count: 40 });
+  const rules = definitions.map(({ rule }) => ruleText(rule));
+  assert.ok(rules.some((rule) => rule.startsWith("within:")));
+  assert.ok(!rules.some((rule) => /triangulated|gabriel|relative|sphere/.test(rule)));
+  assert.ok(notes.some((note) => /ellipsoid/.test(note)));
 });

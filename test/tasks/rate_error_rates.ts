@@ -68,12 +68,18 @@ async function isRejected(values: Float64Array): Promise<boolean> {
   return twoSidedP(reference) <= LEVEL;
 }
 
+const PLACED = [["anywhere", anywhere], ["falling around a town", aroundTown]] as const;
+const percent = (share: number) => `${(100 * share).toFixed(1)} %`;
+
 console.log("| populations | placed | raw rates | standardized rates |\n| --- | --- | --- | --- |");
-for (const largest of [50, 500, 5000, 50_000]) {
-  for (const [how, place] of [["anywhere", anywhere], ["around a town", aroundTown]] as const) {
-    const { raw, standard } = await rejections(place(sizes(largest)));
-    const range = largest === 50 ? "50" : `50 to ${largest.toLocaleString("en-US")}`;
-    const percent = (share: number) => `${(100 * share).toFixed(1)} %`;
-    console.log(`| ${range} | ${how} | ${percent(raw)} | ${percent(standard)} |`);
+await printRow("all 50 |", sizes(50));
+for (const largest of [500, 5000, 50_000]) {
+  for (const [how, place] of PLACED) {
+    await printRow(`50 to ${largest.toLocaleString("en-US")} | ${how}`, place(sizes(largest)));
   }
+}
+
+async function printRow(title: string, population: Float64Array): Promise<void> {
+  const { raw, standard } = await rejections(population);
+  console.log(`| ${title} | ${percent(raw)} | ${percent(standard)} |`);
 }

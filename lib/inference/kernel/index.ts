@@ -3,6 +3,6 @@
 export { sumPairs } from "./pairs";
 export { rankAreas } from "./rank";
 export { drawRankedBlock } from "./ranked";
-export { interleave, shuffleColumn } from "./shuffle";
+export { interleave, putInPlace, shuffleColumn } from "./shuffle";
 export { sortDoubles } from "./sort";
 export { dealBlock, takeOwnAreasOut, weighBlock } from "./weighed";

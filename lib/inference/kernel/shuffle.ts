@@ -67,3 +67,13 @@ export function interleave(columns: usize, n: u32, lanes: usize): void {
     }
   }
 }
+
+/** Moves the eight singles of each area in `lanes` to its place in `target`. */
+export function putInPlace(lanes: usize, n: u32, places: usize, target: usize): void {
+  for (let i: u32 = 0; i < n; i++) {
+    const from = lanes + ((i as usize) << 5);
+    const to = target + ((load<u32>(places + ((i as usize) << 2)) as usize) << 5);
+    v128.store(to, v128.load(from));
+    v128.store(to, v128.load(from, 16), 16);
+  }
+}

@@ -11,6 +11,8 @@ const BLOCK: u32 = 1024;
 @unmanaged
 class Row {
   observed: f64;
+  /** Score of the area itself. */
+  own: f64;
   /** Singles above and below which a weighed sum is certain to differ from the observed one, and to which side. */
   surelyAbove: f32;
   surelyBelow: f32;
@@ -48,9 +50,9 @@ export class WeighedLayout {
   drawn: usize;
   marks: usize;
   paired: usize;
+  /** What a draw adds: 0, its score; 1, the squared difference between its score and the row's own. */
+  squared: u32;
 }
-
-const ROW: u32 = 5; // a row is 32 bytes
 
 /** Fills both tables with the `count` permutations of a block. Marks of this block must not have been used before. */
 export function dealBlock(layout: WeighedLayout, block: u32, count: u32): void {
@@ -78,16 +80,20 @@ export function weighBlock(layout: WeighedLayout, list: usize, active: u32, coun
     const first = rowAt(layout, load<u32>(list + ((r as usize) << 2)));
     const hasSecond = r + 1 < active;
     const second = hasSecond ? rowAt(layout, load<u32>(list + ((r as usize) << 2), 4)) : first;
-    weighTwo(layout, first, second, hasSecond, count, tie);
+    // Two copies of the loop, each without the question.
+    if (layout.squared) weighTwo(layout, first, second, hasSecond, count, tie, true);
+    else weighTwo(layout, first, second, hasSecond, count, tie, false);
   }
 }
 
 // @ts-ignore: decorators on functions are AssemblyScript
 @inline
 function rowAt(layout: WeighedLayout, row: u32): Row {
-  return changetype<Row>(layout.rows + ((row as usize) << ROW));
+  return changetype<Row>(layout.rows + (row as usize) * offsetof<Row>());
 }
 
+// @ts-ignore: decorators on functions are AssemblyScript
+@inline
 function weighTwo(
   layout: WeighedLayout,
   first: Row,
@@ -95,10 +101,12 @@ function weighTwo(
   hasSecond: bool,
   count: u32,
   tie: f64,
+  squared: bool,
 ): void {
   const longest = max(first.length, second.length);
   pairWeights(layout, first, second, longest);
   const paired = layout.paired, pairedEnd = paired + ((longest as usize) << 3);
+  const ownA = f32x4.splat(first.own as f32), ownB = f32x4.splat(second.own as f32);
   const aboveA = f32x4.splat(first.surelyAbove), belowA = f32x4.splat(first.surelyBelow);
   const aboveB = f32x4.splat(second.surelyAbove), belowB = f32x4.splat(second.surelyBelow);
   let moreA = i32x4.splat(0), lessA = i32x4.splat(0), moreB = i32x4.splat(0), lessB = i32x4.splat(0);
@@ -108,10 +116,10 @@ function weighTwo(
     for (let w = paired; w < pairedEnd; w += 8) {
       const left = v128.load(line), right = v128.load(line, 16);
       const weightA = v128.load_splat<f32>(w), weightB = v128.load_splat<f32>(w, 4);
-      a = f32x4.add(a, f32x4.mul(left, weightA));
-      A = f32x4.add(A, f32x4.mul(right, weightA));
-      b = f32x4.add(b, f32x4.mul(left, weightB));
-      B = f32x4.add(B, f32x4.mul(right, weightB));
+      a = f32x4.add(a, f32x4.mul(squared ? squaredDifference(left, ownA) : left, weightA));
+      A = f32x4.add(A, f32x4.mul(squared ? squaredDifference(right, ownA) : right, weightA));
+      b = f32x4.add(b, f32x4.mul(squared ? squaredDifference(left, ownB) : left, weightB));
+      B = f32x4.add(B, f32x4.mul(squared ? squaredDifference(right, ownB) : right, weightB));
       line += BLOCK << 2;
     }
     const isMoreA = f32x4.gt(a, aboveA), IsMoreA = f32x4.gt(A, aboveA);
@@ -142,6 +150,13 @@ function weighTwo(
   if (!hasSecond) return;
   second.atLeast += addLanes(moreB);
   second.atMost += addLanes(lessB);
+}
+
+// @ts-ignore: decorators on functions are AssemblyScript
+@inline
+function squaredDifference(scores: v128, own: v128): v128 {
+  const difference = f32x4.sub(scores, own);
+  return f32x4.mul(difference, difference);
 }
 
 /** Weights of two rows side by side, the shorter one filled up with zeros. */
@@ -185,7 +200,8 @@ function weighedSum(layout: WeighedLayout, row: Row, p: u32, without: u32): f64 
     const draw = m == without ? row.length : m;
     const area = load<u32>(layout.dealt + (((draw * BLOCK + p) as usize) << 2));
     const weight = load<f64>(layout.weights + (((row.start + m) as usize) << 3));
-    sum += weight * load<f64>(layout.z + ((area as usize) << 3));
+    const score = load<f64>(layout.z + ((area as usize) << 3)), difference = score - row.own;
+    sum += weight * (layout.squared ? difference * difference : score);
   }
   return sum;
 }
