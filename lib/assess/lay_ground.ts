@@ -9,13 +9,14 @@ import { boundsOf, type Box, pickFeatures } from "../layer/geometry.ts";
 import type { Layer } from "../layer/layer.ts";
 import type { Ground } from "../neighbors/build.ts";
 import { type ContiguityFinder, contiguityFinder } from "../neighbors/contiguity.ts";
+import type { LinkTriples } from "../neighbors/links.ts";
 import { fitsGlobe } from "../neighbors/globe.ts";
 import { parseRule, type Rule, ruleNeeds } from "../neighbors/rule.ts";
 import { chooseMetric, type Metric } from "../project/metric.ts";
 import { representativePoints } from "../project/points.ts";
 import { openProjection } from "../project/projection.ts";
 import { resolveCrs } from "../read/crs.ts";
-import { type LinkList, readLinks } from "../read/links.ts";
+import { readLinks } from "../read/links.ts";
 import { givenPlaces, parsePointFields } from "./area_places.ts";
 import { type RecordedInput, recordInput } from "../read/record_input.ts";
 import { fallsWithDistance, parseWeightRule } from "../weights/weight_rule.ts";
@@ -135,10 +136,10 @@ async function readLinkFiles(
   files: ReadonlySet<string>,
   kept: Uint32Array,
   names: readonly string[],
-): Promise<Map<string, LinkList>> {
+): Promise<Map<string, LinkTriples>> {
   const position = new Int32Array(names.length).fill(-1);
   kept.forEach((row, at) => position[row] = at);
-  const lists = new Map<string, LinkList>();
+  const lists = new Map<string, LinkTriples>();
   for (const file of files) {
     const { from, to, weight } = await readLinks(file, names);
     const inPlay = (_: number, link: number) =>
@@ -147,6 +148,7 @@ async function readLinkFiles(
       from: from.filter(inPlay).map((row) => position[row]),
       to: to.filter(inPlay).map((row) => position[row]),
       weight: weight && weight.filter(inPlay),
+      nameOf: (area) => names[kept[area]],
     });
   }
   return lists;

@@ -9,8 +9,10 @@
  */
 import type { Topology } from "./topology.ts";
 
-/** Links of `left`, of `right`, or of both. Cost: one pass over the links. */
+/** Links of `left`, of `right`, or of both. Cost: one pass over the links, none where one side has no links. */
 export function union(left: Topology, right: Topology): Topology {
+  if (right.indices.length === 0) return { offsets: left.offsets, indices: left.indices };
+  if (left.indices.length === 0) return { offsets: right.offsets, indices: right.indices };
   const most = left.indices.length + right.indices.length;
   const { offsets, indices } = mergeRows(left, right, most, {
     left: true,

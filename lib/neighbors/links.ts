@@ -14,6 +14,8 @@ export interface LinkTriples {
   readonly to: Uint32Array;
   /** Weight of each link, or null where the file has none. */
   readonly weight: Float64Array | null;
+  /** What to call an area in messages. @default its position */
+  readonly nameOf?: (area: number) => string;
 }
 
 /**
@@ -23,7 +25,10 @@ export interface LinkTriples {
  * @param count Number of areas.
  * @throws {UnfitDataError} when a pair comes twice with different weights.
  */
-export function linksTopology(count: number, { from, to, weight }: LinkTriples): Topology {
+export function linksTopology(
+  count: number,
+  { from, to, weight, nameOf = String }: LinkTriples,
+): Topology {
   const order = new Uint32Array(from.length).map((_, link) => link)
     .filter((link) => from[link] !== to[link] && weight?.[link] !== 0)
     .sort((a, b) => from[a] - from[b] || to[a] - to[b]);
@@ -35,7 +40,9 @@ export function linksTopology(count: number, { from, to, weight }: LinkTriples):
     const again = last >= 0 && from[last] === from[link] && to[last] === to[link];
     if (again && weight && weight[last] !== weight[link]) {
       throw new UnfitDataError(
-        `Cannot weigh the link from area ${from[link]} to area ${to[link]} as it is given twice, ` +
+        `Cannot weigh the link from area ${nameOf(from[link])} to area ${
+          nameOf(to[link])
+        } as it is given twice, ` +
           `with ${weight[last]} and ${weight[link]}; keep one of them`,
       );
     }

@@ -33,23 +33,23 @@ export function vertexIds(xy: Float64Array, tolerance: number): VertexIds {
   const capacity = tableSize(n);
   const heads = new Int32Array(capacity).fill(-1);
   const exactIds = new Uint32Array(n);
-  const next = new Int32Array(n), firsts = new Uint32Array(n);
+  const next = new Int32Array(n), placed = new Float64Array(2 * n);
   const nearPairs: number[] = [];
   const perUnit = tolerance > 0 ? 1 / (CELL * tolerance) : 1;
   let count = 0;
   for (let v = 0; v < n; v++) {
     const x = xy[2 * v], y = xy[2 * v + 1];
-    const home = hashPair(Math.floor(x * perUnit), Math.floor(y * perUnit)) & (capacity - 1);
+    const column = Math.floor(x * perUnit), row = Math.floor(y * perUnit);
+    const home = hashPair(column, row) & (capacity - 1);
     let same = heads[home];
-    while (same >= 0 && (xy[2 * firsts[same]] !== x || xy[2 * firsts[same] + 1] !== y)) {
-      same = next[same];
-    }
+    while (same >= 0 && (placed[2 * same] !== x || placed[2 * same + 1] !== y)) same = next[same];
     if (same >= 0) {
       exactIds[v] = same;
       continue;
     }
     joinNear(x, y);
-    firsts[count] = v;
+    placed[2 * count] = x;
+    placed[2 * count + 1] = y;
     next[count] = heads[home];
     heads[home] = count;
     exactIds[v] = count++;
@@ -60,16 +60,16 @@ export function vertexIds(xy: Float64Array, tolerance: number): VertexIds {
 
   /** Notes the places within the tolerance of a new one, looking over the borders it is near to. */
   function joinNear(x: number, y: number): void {
-    const west = Math.floor((x - tolerance) * perUnit),
-      east = Math.floor((x + tolerance) * perUnit);
+    const west = Math.floor((x - tolerance) * perUnit);
+    const east = Math.floor((x + tolerance) * perUnit);
     const south = Math.floor((y - tolerance) * perUnit);
     const north = Math.floor((y + tolerance) * perUnit);
     for (let c = west; c <= east; c++) {
       for (let r = south; r <= north; r++) {
         let place = heads[hashPair(c, r) & (capacity - 1)];
         for (; place >= 0; place = next[place]) {
-          const dx = Math.abs(xy[2 * firsts[place]] - x);
-          const dy = Math.abs(xy[2 * firsts[place] + 1] - y);
+          const dx = Math.abs(placed[2 * place] - x);
+          const dy = Math.abs(placed[2 * place + 1] - y);
           if (dx <= tolerance && dy <= tolerance) nearPairs.push(place, count);
         }
       }

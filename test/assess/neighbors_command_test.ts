@@ -186,3 +186,13 @@ Deno.test("distance is measured between the points that --points names", () =>
     await assert.rejects(buildLinks(layer, { ...source, points: "east" }), UsageError);
     await assert.rejects(buildLinks(layer, { ...source, points: "id,north" }), UsageError);
   }));
+
+Deno.test("a link given twice with different weights is refused by the names of its areas", () =>
+  withFolder(async (folder) => {
+    const table = `${folder}/links.csv`;
+    await Deno.writeTextFile(table, "from,to,weight\nAshe,Surry,2\nAshe,Surry,3\n");
+    await assert.rejects(
+      buildLinks(NC, { neighbors: `links:"${table}"`, id: "NAME" }),
+      /from area Ashe to area Surry .*twice/,
+    );
+  }));

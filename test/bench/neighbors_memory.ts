@@ -1,5 +1,6 @@
 /**
- * Prints how many GiB finding the touching areas of a layer takes above its geometry, at most.
+ * Prints how many GiB finding the touching areas of a layer takes above its geometry, at most. `make PATH` writes the
+ * layer's arrays, `measure PATH` reads them: what making them left behind is no part of it.
  *
  * @module
  */
@@ -7,17 +8,35 @@ import { readFileSync, writeFileSync } from "node:fs";
 import { contiguityFinder } from "../../lib/neighbors/contiguity.ts";
 import { voronoiGeometry } from "./neighbor_maps.ts";
 
-const geometry = voronoiGeometry(1000, 1000);
-// Run with --expose-gc: what making the input left behind is no part of it.
-(globalThis as { gc?: () => void }).gc?.();
-writeFileSync("/proc/self/clear_refs", "5"); // the highest mark begins anew
-const before = residentKilobytes("VmRSS");
-const { touching } = contiguityFinder(geometry).find(null);
-if (touching.indices.length < 5_000_000) throw new Error("The areas of the bench do not touch");
-console.log(((residentKilobytes("VmHWM") - before) / 2 ** 20).toFixed(3));
+const [what, path] = Deno.args;
+if (what === "make") {
+  const { vertexStarts, xy } = voronoiGeometry(1000, 1000);
+  writeFileSync(`${path}.starts`, new Uint8Array(vertexStarts.buffer));
+  writeFileSync(`${path}.xy`, new Uint8Array(xy.buffer));
+} else console.log((measure() / 2 ** 20).toFixed(3));
 
-/** Memory in use now (`VmRSS`) or at most so far (`VmHWM`), as Linux tells it. */
-function residentKilobytes(field: "VmRSS" | "VmHWM"): number {
-  const line = readFileSync("/proc/self/status", "utf8").match(new RegExp(`${field}:\\s+(\\d+)`));
-  return Number(line?.[1]);
+/** KiB at most above what the layer takes. */
+function measure(): number {
+  const vertexStarts = Uint32Array.from(new Uint32Array(bytesOf(`${path}.starts`)));
+  const xy = Float64Array.from(new Float64Array(bytesOf(`${path}.xy`)));
+  const areas = vertexStarts.length - 1;
+  const starts = Uint32Array.from({ length: areas + 1 }, (_, i) => i);
+  const kinds = new Uint8Array(areas).fill(3);
+  const geometry = { kinds, partStarts: starts, ringStarts: starts, vertexStarts, xy };
+  const layer = (kinds.byteLength + starts.byteLength + vertexStarts.byteLength + xy.byteLength) /
+    1024;
+  const { touching } = contiguityFinder(geometry).find(null);
+  if (touching.indices.length < 5_000_000) throw new Error("The areas of the bench do not touch");
+  // The runtime itself counts too: this is an upper bound.
+  return highestMark() - layer;
+}
+
+function bytesOf(file: string): ArrayBuffer {
+  const { buffer, byteOffset, byteLength } = readFileSync(file);
+  return (buffer as ArrayBuffer).slice(byteOffset, byteOffset + byteLength);
+}
+
+/** KiB that this process has taken at most, as Linux tells it. */
+function highestMark(): number {
+  return Number(readFileSync("/proc/self/status", "utf8").match(/VmHWM:\s+(\d+)/)?.[1]);
 }

@@ -6,16 +6,31 @@ enum { LANES = 8, ROWS = 32 };
 typedef float Singles __attribute__((vector_size(LANES * 4), aligned(16)));
 typedef float Four __attribute__((vector_size(16), aligned(4)));
 
-static void shuffle(float *values, uint32_t n, Stream *stream) {
+// Swaps the last of `left` values with any of them; biased bits are passed over.
+static inline uint32_t settle_last(float *values, uint32_t left, uint32_t bits) {
+  uint64_t product = (uint64_t)bits * left;
+  uint32_t low = product;
+  if (__builtin_expect(low < left, 0) && low < (0u - left) % left) return left;
+  uint32_t chosen = product >> 32;
+  left--;
+  float kept = values[left];
+  values[left] = values[chosen];
+  values[chosen] = kept;
+  return left;
+}
+
+static void shuffle(float *values, uint32_t n, const Stream *stream) {
+  uint64_t a = stream->s[0], b = stream->s[1], c = stream->s[2], d = stream->s[3];
   for (uint32_t left = n; left > 1;) {
-    uint64_t product = (uint64_t)next_bits(stream) * left;
-    uint32_t low = product;
-    if (__builtin_expect(low < left, 0) && low < (0u - left) % left) continue;
-    left--;
-    uint32_t chosen = product >> 32;
-    float kept = values[left];
-    values[left] = values[chosen];
-    values[chosen] = kept;
+    uint64_t word = turn(b * 5, 7) * 9, shifted = b << 17;
+    c ^= a;
+    d ^= b;
+    b ^= c;
+    a ^= d;
+    c ^= shifted;
+    d = turn(d, 45);
+    left = settle_last(values, left, word);
+    if (left > 1) left = settle_last(values, left, word >> 32);
   }
 }
 

@@ -75,7 +75,13 @@ export function reportSample(options: HexOptions = ISLANDS): ReportInput {
 
 /** Both ends of each link. */
 function linksOf({ offsets, indices }: Weights): [number, number][] {
-  return Array.from(indices, (to, link) => [offsets.findIndex((end) => end > link) - 1, to]);
+  const links: [number, number][] = [];
+  for (let from = 0; from + 1 < offsets.length; from++) {
+    for (let link = offsets[from]; link < offsets[from + 1]; link++) {
+      links.push([from, indices[link]]);
+    }
+  }
+  return links;
 }
 
 /** The same findings with other results. */

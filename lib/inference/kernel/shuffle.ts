@@ -1,6 +1,6 @@
 /** Shuffled maps, eight of them side by side. */
 
-import { bufferEnd, bufferOf, openStream, refill } from "./stream";
+import { leastUnbiased, openStream } from "./stream";
 
 /** Fills `target` with the `n` singles of `values` in the order of permutation `index`. */
 export function shuffleColumn(
@@ -18,25 +18,37 @@ export function shuffleColumn(
   shuffle(target, n, stream);
 }
 
-/** Fisher & Yates; the same order as `../shuffle.ts` gives. */
+/**
+ * Fisher & Yates; the same order as `../shuffle.ts` gives. The stream is used up at once, so its state stays in
+ * registers and each word serves two steps, its low half first.
+ */
 function shuffle(values: usize, n: u32, stream: usize): void {
-  const end = bufferEnd(stream);
-  let at = end;
+  let a = load<u64>(stream), b = load<u64>(stream, 8);
+  let c = load<u64>(stream, 16), d = load<u64>(stream, 24);
   for (let left = n; left > 1;) {
-    if (at == end) {
-      refill(stream);
-      at = bufferOf(stream);
-    }
-    const product = (load<u32>(at) as u64) * (left as u64);
-    at += 4;
-    const low = product as u32;
-    if (low < left && low < (0 - left) % left) continue;
-    left--;
-    const a = values + ((left as usize) << 2), b = values + (((product >> 32) as usize) << 2);
-    const kept = load<u32>(a);
-    store<u32>(a, load<u32>(b));
-    store<u32>(b, kept);
+    const word = rotl<u64>(b * 5, 7) * 9, shifted = b << 17;
+    c ^= a;
+    d ^= b;
+    b ^= c;
+    a ^= d;
+    c ^= shifted;
+    d = rotl<u64>(d, 45);
+    left = settleLast(values, left, word as u32);
+    if (left > 1) left = settleLast(values, left, (word >> 32) as u32);
   }
+}
+
+/** Swaps the last of `left` singles with any of them and returns how many are left; with biased bits, all are. */
+// @ts-ignore: decorators on functions are AssemblyScript
+@inline
+function settleLast(values: usize, left: u32, bits: u32): u32 {
+  const product = (bits as u64) * (left as u64), low = product as u32;
+  if (low < left && low < leastUnbiased(left)) return left;
+  const last = values + (((left - 1) as usize) << 2), chosen = values + (((product >> 32) as usize) << 2);
+  const kept = load<u32>(last);
+  store<u32>(last, load<u32>(chosen));
+  store<u32>(chosen, kept);
+  return left - 1;
 }
 
 /**
