@@ -5,8 +5,11 @@
  */
 import { type FlatGeometry, GEOMETRY_KINDS, ringsOf } from "../layer/geometry.ts";
 
-/** Segments as x0, y0, x1, y1 with x0 <= x1, four numbers each, in order of x0. */
+/** Segments as x0, y0, x1, y1 with x0 <= x1, four numbers each. */
 type Segments = Float64Array;
+
+/** Up to this many segments comparing every pair is faster than sorting. */
+const FEW_SEGMENTS = 32;
 
 /**
  * The polygons whose boundary crosses itself, ascending. Their neighbors are found as those of any other area;
@@ -27,10 +30,51 @@ export function findSelfCrossings(geometry: FlatGeometry): number[] {
  * Rings are given as x0, y0, x1, y1, … Segments that share an end, touch, or overlap along a stretch do not
  * count; nor does a crossing that rounding could have made (Shewchuk 1997, bound A of the orientation test).
  *
- * Cost: a sort of the segments and a sweep along x over those whose ranges of x overlap.
+ * Cost: for few segments a look at every pair, else a sort and a sweep along x over those whose ranges of x overlap.
  */
 export function crossesItself(rings: readonly Float64Array[]): boolean {
-  const segments = sortedSegments(rings);
+  const segments = segmentsOf(rings);
+  return segments.length <= 4 * FEW_SEGMENTS
+    ? somePairCrosses(segments)
+    : sweepFindsCrossing(sorted(segments));
+}
+
+function segmentsOf(rings: readonly Float64Array[]): Segments {
+  const count = rings.reduce((sum, ring) => sum + Math.max(0, ring.length / 2 - 1), 0);
+  const segments = new Float64Array(4 * count);
+  let at = 0;
+  for (const ring of rings) {
+    for (let v = 0; v + 3 < ring.length; v += 2, at += 4) {
+      const first = ring[v] <= ring[v + 2] ? v : v + 2, last = 2 * v + 2 - first;
+      segments[at] = ring[first];
+      segments[at + 1] = ring[first + 1];
+      segments[at + 2] = ring[last];
+      segments[at + 3] = ring[last + 1];
+    }
+  }
+  return segments;
+}
+
+function somePairCrosses(segments: Segments): boolean {
+  for (let s = 4; s < segments.length; s += 4) {
+    for (let t = 0; t < s; t += 4) {
+      const apart = segments[s] > segments[t + 2] || segments[t] > segments[s + 2];
+      if (!apart && crosses(segments, s, t)) return true;
+    }
+  }
+  return false;
+}
+
+/** The segments in order of their western ends. */
+function sorted(segments: Segments): Segments {
+  const order = Array.from({ length: segments.length / 4 }, (_, s) => 4 * s)
+    .sort((a, b) => segments[a] - segments[b]);
+  const inOrder = new Float64Array(segments.length);
+  order.forEach((from, at) => inOrder.set(segments.subarray(from, from + 4), 4 * at));
+  return inOrder;
+}
+
+function sweepFindsCrossing(segments: Segments): boolean {
   let active: number[] = [];
   for (let s = 0; s < segments.length; s += 4) {
     active = active.filter((other) => segments[other + 2] >= segments[s]);
@@ -38,17 +82,6 @@ export function crossesItself(rings: readonly Float64Array[]): boolean {
     active.push(s);
   }
   return false;
-}
-
-function sortedSegments(rings: readonly Float64Array[]): Segments {
-  const loose: number[][] = [];
-  for (const ring of rings) {
-    for (let v = 0; v + 3 < ring.length; v += 2) {
-      const [x0, y0, x1, y1] = [ring[v], ring[v + 1], ring[v + 2], ring[v + 3]];
-      loose.push(x0 <= x1 ? [x0, y0, x1, y1] : [x1, y1, x0, y0]);
-    }
-  }
-  return Float64Array.from(loose.sort((a, b) => a[0] - b[0]).flat());
 }
 
 function crosses(segments: Segments, s: number, t: number): boolean {
