@@ -74,9 +74,9 @@ function reachLine({ metricCrs }: Results["layer"], { neighbors, diagnostics }: 
   const longest = longestLink === null ? "" : `, longest link ${shortNumber(longestLink)} ${unit}`;
   const reach = noneAlone === null || oneComponent === null
     ? ""
-    : `; within ${reachText(noneAlone, unit)} nobody is alone, within ${
+    : `; within ${reachText(noneAlone, unit)} no area is alone, within ${
       reachText(oneComponent, unit)
-    } all hang together`;
+    } the map hangs together`;
   return `Links      ${pieces}, ${oneWayLinks} one-way links${longest}${reach}`;
 }
 

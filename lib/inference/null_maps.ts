@@ -36,7 +36,7 @@ export function shuffledMaps(values: Float64Array): NullModel<Float64Array> {
 
 /**
  * Makes `permutations` maps (999 by default) of a null and hands each to `visit`, with its number from 0 on; returns how
- * many there were. Map p depends on the seed and p only.
+ * many there were. Map p depends on seed and p only.
  *
  * @throws UsageError for a number that is not whole, below 99 or above 9,999,999. Rejects with the signal's reason
  * when aborted.

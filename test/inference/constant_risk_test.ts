@@ -141,7 +141,7 @@ Deno.test("checkConstantRisk() compares the same I as moranI(), for any values m
   }
 });
 
-Deno.test("checkConstantRisk() depends on the seed and on nothing else", async () => {
+Deno.test("checkConstantRisk() depends on its seed and on nothing else", async () => {
   const counts = dealtOut(200, "seeded", () => 1);
   const of = (text: string) =>
     checkConstantRisk(counts, weights, {
